@@ -1,0 +1,1 @@
+"""Choosing among liquids: shortlists and their export."""

@@ -1,0 +1,1 @@
+"""The forces between two molecules as plain functions of arrays in SI units."""

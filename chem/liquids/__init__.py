@@ -1,0 +1,1 @@
+"""One liquid: refraction, association evidence, cohesion."""

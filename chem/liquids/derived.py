@@ -1,0 +1,182 @@
+"""Quantities that follow from the stored ones, at any temperature, with their uncertainty.
+
+`state` takes the stored columns of n liquids and returns every quantity the program knows at one
+temperature: stored numbers carried there by a stated rule or dropped, and derived ones added.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Sequence
+
+import numpy as np
+from numpy.typing import ArrayLike, NDArray
+
+from stillroom.chem.data.propagation import propagate
+from stillroom.chem.data.quantities import QUANTITIES
+from stillroom.chem.data.values import Column, Columns
+from stillroom.chem.forces.dispersion import (
+    dispersion_c6,
+    london_c6,
+    model_uncertainty,
+    slater_kirkwood_c6,
+)
+from stillroom.chem.liquids.association import kirkwood_factor
+from stillroom.chem.liquids.cohesion import cohesive_energy, solubility_parameter
+from stillroom.chem.liquids.temperature import NEAR, rackett_density_ratio, watson_ratio
+
+Array = NDArray[np.float64]
+Words = NDArray[np.object_]
+
+_WEAKNESS = ("measured", "user", "derived", "computed", "estimated")
+_TABULATED = ("vapor_pressure", "permittivity", "refractive_index", "viscosity", "surface_tension")
+_RULE_ERROR = 0.1  # of the change between the two temperatures: our allowance for either rule
+_BRIEF = 10.0  # K: a rule used over a shorter span keeps the kind of a derived number
+
+
+def state(stored: Columns, electrons: Array, temperature: float) -> Columns:
+    """Return all columns of n liquids at `temperature` (K).
+
+    Parameters
+    ----------
+    stored : Columns
+        Columns as tabulated, each of length n; quantities may be absent.
+    electrons : float array (n,)
+        Valence electrons of each liquid, NaN where unknown.
+    temperature : float
+        K.
+
+    Returns
+    -------
+    Columns
+        One column of length n for every quantity. Density follows Rackett's equation and the
+        vaporization enthalpy Watson's where a critical temperature is known; other quantities that
+        depend on temperature are kept within 5 K of their own temperature and missing beyond, with
+        a note that says so.
+    """
+    n = electrons.size
+    now = {name: stored.get(name) or Column.empty(q, n) for name, q in QUANTITIES.items()}
+    critical = now["critical_temperature"].si
+    now["density"] = _carried(now["density"], temperature, critical, rackett_density_ratio)
+    now["vaporization_enthalpy"] = _carried(
+        now["vaporization_enthalpy"], temperature, critical, watson_ratio
+    )
+    for name in _TABULATED:
+        now[name] = _kept_if_near(now[name], temperature)
+
+    def derive(name: str, function: Callable[..., ArrayLike], inputs: Sequence[str]) -> None:
+        now[name] = _derived(now[name], function, [now[i] for i in inputs], temperature)
+
+    derive("molar_volume", lambda m, rho: m / rho, ("molar_mass", "density"))
+    derive("cohesive_energy", lambda h: cohesive_energy(h, temperature), ("vaporization_enthalpy",))
+    derive("solubility_parameter", solubility_parameter, ("cohesive_energy", "molar_volume"))
+    derive(
+        "kirkwood_factor",
+        lambda eps, n, volume, mu: kirkwood_factor(eps, n, volume, mu, temperature),
+        ("permittivity", "refractive_index", "molar_volume", "dipole"),
+    )
+    now["c6"] = _dispersion(now, electrons)
+    return now
+
+
+def _carried(
+    column: Column, temperature: float, critical: Array, rule: Callable[..., Array]
+) -> Column:
+    """Carry a column to `temperature` by a ratio rule; missing where the rule cannot be used."""
+    shift = temperature - column.temperature
+    ratio = np.where(
+        np.nan_to_num(shift) == 0, 1.0, rule(temperature, column.temperature, critical)
+    )
+    ratio = np.where(np.isnan(ratio) & (np.abs(shift) <= NEAR), 1.0, ratio)
+    moved = column.si * (ratio - 1)
+    used_rule = (ratio != 1.0) & ~np.isnan(column.si)
+    kind, note = column.kind.copy(), column.note.copy()
+    for row in np.flatnonzero(used_rule):
+        if np.isnan(ratio[row]):
+            note[row] = _away(column.temperature[row])
+            continue
+        weak = "derived" if abs(shift[row]) <= _BRIEF else "estimated"
+        kind[row] = max(kind[row], weak, key=_WEAKNESS.index)
+        note[row] = f"carried from {_celsius(column.temperature[row])}"
+    return Column(
+        column.quantity,
+        column.si * ratio,
+        np.hypot(column.uncertainty * ratio, _RULE_ERROR * moved),
+        np.where(np.isnan(column.temperature), np.nan, temperature),
+        kind,
+        column.source,
+        note,
+    )
+
+
+def _kept_if_near(column: Column, temperature: float) -> Column:
+    far = np.abs(column.temperature - temperature) > NEAR + 1e-9
+    if not far.any():
+        return column
+    note = column.note.copy()
+    for row in np.flatnonzero(far & ~np.isnan(column.si)):
+        note[row] = _away(column.temperature[row])
+    return Column(
+        column.quantity,
+        np.where(far, np.nan, column.si),
+        column.uncertainty,
+        column.temperature,
+        column.kind,
+        column.source,
+        note,
+    )
+
+
+def _derived(
+    given: Column, function: Callable[..., ArrayLike], inputs: list[Column], temperature: float
+) -> Column:
+    """Fill `given` where it has no number of its own."""
+    with np.errstate(invalid="ignore", divide="ignore"):
+        si, spread = propagate(
+            function, [c.si for c in inputs], [np.nan_to_num(c.uncertainty) for c in inputs]
+        )
+    own = ~np.isnan(given.si)
+    origin = "from " + ", ".join(c.quantity.name for c in inputs)
+    present = ~np.isnan(si)
+    return Column(
+        given.quantity,
+        np.where(own, given.si, si),
+        np.where(own, given.uncertainty, spread),
+        np.where(own, given.temperature, np.where(present, temperature, np.nan)),
+        np.where(own, given.kind, np.where(present, _weakest(inputs), "")),
+        np.where(own, given.source, np.where(present, origin, "")),
+        given.note,
+    )
+
+
+def _dispersion(now: Columns, electrons: Array) -> Column:
+    """Return the column of like-pair C6 by the default model, its spread included."""
+    alpha, ionization = now["polarizability"], now["ionization_energy"]
+    column = _derived(
+        now["c6"],
+        lambda a, i: dispersion_c6(a, a, i, i, electrons, electrons),
+        [alpha, ionization],
+        np.nan,
+    )
+    model = model_uncertainty(
+        london_c6(alpha.si, alpha.si, ionization.si, ionization.si),
+        slater_kirkwood_c6(alpha.si, alpha.si, electrons, electrons),
+    )
+    column.uncertainty[:] = np.hypot(column.uncertainty, model * column.si)
+    return column
+
+
+def _weakest(inputs: list[Column]) -> Words:
+    """Return, row by row, the weakest kind among the inputs, at best `derived`."""
+    rank = np.full(inputs[0].si.size, _WEAKNESS.index("derived"))
+    for column in inputs:
+        ranks = [_WEAKNESS.index(k) if k else 0 for k in column.kind]
+        rank = np.maximum(rank, ranks)
+    return np.array([_WEAKNESS[r] for r in rank], dtype=object)
+
+
+def _away(kelvin: float) -> str:
+    return f"tabulated at {_celsius(kelvin)} only"
+
+
+def _celsius(kelvin: float) -> str:
+    return f"{kelvin - 273.15:.4g} °C"

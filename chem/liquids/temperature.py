@@ -1,0 +1,45 @@
+"""How a number tabulated at one temperature is carried to another, and where it may not be."""
+
+from __future__ import annotations
+
+import numpy as np
+from numpy.typing import ArrayLike, NDArray
+
+Array = NDArray[np.float64]
+
+WATSON_EXPONENT = 0.38
+"""K. M. Watson, Ind. Eng. Chem. 35 (1943) 398."""
+
+RACKETT_BASE = 0.27
+"""Typical Rackett parameter Z_RA of organic liquids, 0.23 to 0.29 (C. F. Spencer, R. P. Danner,
+J. Chem. Eng. Data 17 (1972) 236)."""
+
+NEAR = 5.0
+"""K: a tabulated value is used unchanged within this distance of its temperature."""
+
+NEAR_CRITICAL = 0.95
+"""Both rules are used up to this fraction of the critical temperature."""
+
+
+def watson_ratio(temperature: ArrayLike, reference: ArrayLike, critical: ArrayLike) -> Array:
+    """Return dHvap(T)/dHvap(T0) = ((1 - T/Tc)/(1 - T0/Tc))^0.38 (K, shapes broadcast; NaN if not
+    both temperatures are below `NEAR_CRITICAL` Tc)."""
+    t, t0 = _reduced(temperature, critical), _reduced(reference, critical)
+    return np.asarray(((1 - t) / (1 - t0)) ** WATSON_EXPONENT)
+
+
+def rackett_density_ratio(
+    temperature: ArrayLike, reference: ArrayLike, critical: ArrayLike
+) -> Array:
+    """Return rho(T)/rho(T0) = Z^(f(T0) - f(T)), f = (1 - T/Tc)^(2/7), Z = `RACKETT_BASE`.
+
+    Shapes broadcast, temperatures in K; NaN if not both temperatures are below `NEAR_CRITICAL` Tc.
+    Source: H. G. Rackett, J. Chem. Eng. Data 15 (1970) 514.
+    """
+    t, t0 = _reduced(temperature, critical), _reduced(reference, critical)
+    return np.asarray(RACKETT_BASE ** ((1 - t0) ** (2 / 7) - (1 - t) ** (2 / 7)))
+
+
+def _reduced(temperature: ArrayLike, critical: ArrayLike) -> Array:
+    ratio = np.asarray(temperature, float) / np.asarray(critical, float)
+    return np.where(ratio < NEAR_CRITICAL, ratio, np.nan)

@@ -1,0 +1,1 @@
+"""Two molecules: angle average, forces, contact, verdict, ranking."""

@@ -1,0 +1,1 @@
+"""The table of liquids: reading, looking up, filtering, following temperature."""

@@ -1,0 +1,1 @@
+"""The terminal side of stillroom: the command line and the workbench."""
