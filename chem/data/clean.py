@@ -24,6 +24,8 @@ def clean_text(text: str, limit: int = 400) -> str:
     >>> clean_text("acetone\x1b[31m\n dry")
     'acetone [31m dry'
     """
+    if text.isprintable() and "  " not in text and len(text) <= limit:
+        return text.strip()
     safe = "".join(" " if unicodedata.category(c) in _UNSAFE else c for c in text)
     line = " ".join(safe.split())
     return line if len(line) <= limit else line[: limit - 1] + "…"

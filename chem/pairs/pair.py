@@ -172,6 +172,11 @@ def _contact(a: Liquid, b: Liquid) -> float:
     return float(contact_distance(*volumes))
 
 
+def pair_molecules(pair: PairInteraction) -> tuple[Molecule, Molecule]:
+    """Return what the pair formulas need of both sides."""
+    return _molecule(pair.a), _molecule(pair.b)
+
+
 def _molecule(liquid: Liquid) -> Molecule:
     return Molecule(*_inputs(liquid), liquid.identity.electrons)
 

@@ -15,7 +15,6 @@ from numpy.typing import NDArray
 
 from stillroom.chem.data.constants import REFERENCE_TEMPERATURE
 from stillroom.chem.data.errors import OutsideRange
-from stillroom.chem.data.quantities import near
 from stillroom.chem.data.units import parse_temperature
 from stillroom.chem.forces.contact import contact_distance
 from stillroom.chem.pairs.terms import Molecule, PairTerms, pair_terms
@@ -167,9 +166,7 @@ def rank(
         If `by`, `top` or `model` cannot be used.
     """
     if by not in KEYS:
-        hint = near(by, KEYS, 1)
-        wanted = " | ".join(KEYS)
-        raise OutsideRange("ranking key", f"'{by}'", f"{hint[0]}, or " * bool(hint) + wanted)
+        raise OutsideRange("ranking key", f"'{by}'", "one of " + ", ".join(KEYS))
     if top is not None and top < 1:
         raise OutsideRange("number of pairs to show", str(top), "1 or more")
     key = KEYS[by]

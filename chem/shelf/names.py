@@ -74,9 +74,12 @@ class NameIndex:
         return suggestions[:3]
 
     def matches(self, text: str) -> list[int]:
-        """Return the rows with any name, CAS number, formula or family containing `text`."""
+        """Return the rows with any name, CAS number, formula or family containing `text`.
+
+        The liquid that `text` names comes first, then those whose name begins with it.
+        """
         key = fold(text)
-        return [
+        found = [
             row
             for row, who in enumerate(self._identities)
             if any(
@@ -84,3 +87,8 @@ class NameIndex:
                 for t in (who.name, who.id, *who.synonyms, who.cas, who.formula, who.family)
             )
         ]
+        exact = self._exact.get(key)
+        return sorted(
+            found,
+            key=lambda row: (row != exact, not fold(self._identities[row].name).startswith(key)),
+        )

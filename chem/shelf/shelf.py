@@ -126,7 +126,10 @@ class Shelf:
         return np.flatnonzero(filters.select(expression, self))
 
     def matching(self, text: str) -> NDArray[np.intp]:
-        """Return the rows with any name, CAS number, formula or family containing `text`."""
+        """Return the rows with any name, CAS number, formula or family containing `text`.
+
+        The liquid that `text` names comes first, then those whose name begins with it.
+        """
         return np.array(self._index.matches(text), dtype=np.intp)
 
     def take(self, rows: NDArray[np.intp]) -> Shelf:
