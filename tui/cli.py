@@ -13,7 +13,7 @@ from stillroom.chem.data.errors import StillroomError
 from stillroom.tui.commands.common import STORE_HELP, join_negative_values
 from stillroom.tui.exits import BAD_INPUT, OK
 
-_COMMANDS = ("list", "show", "pair", "rank", "sources")
+_COMMANDS = ("list", "show", "pair", "rank", "shortlist", "sources")
 
 
 class _Parser(argparse.ArgumentParser):

@@ -2,25 +2,22 @@
 
 from __future__ import annotations
 
-from collections.abc import Sequence
 from contextlib import suppress
 from dataclasses import asdict, dataclass, field
-from typing import TYPE_CHECKING, Any
+from typing import Any
 
 import numpy as np
 from numpy.typing import NDArray
 
+from stillroom.chem.choosing.shortlist import DEFAULT_NAME, Entry
+from stillroom.chem.choosing.store import Store
 from stillroom.chem.data.constants import REFERENCE_TEMPERATURE
-from stillroom.chem.data.errors import StillroomError
+from stillroom.chem.data.errors import StillroomError, UnknownShortlist
 from stillroom.chem.data.quantities import BY_COLUMN, QUANTITIES
 from stillroom.chem.data.units import parse_temperature
 from stillroom.chem.pairs.ranking import KEYS
 from stillroom.chem.shelf.filters import TEXT_FIELDS
 from stillroom.chem.shelf.shelf import Shelf
-
-if TYPE_CHECKING:
-    from stillroom.chem.choosing.shortlist import Entry
-    from stillroom.chem.choosing.store import Store
 
 Rows = NDArray[np.intp]
 
@@ -69,7 +66,7 @@ class Session:
         self.store = store
         self.view = ShelfView()
         self.pairs = PairsView()
-        self.shortlist = "shortlist"
+        self.shortlist = DEFAULT_NAME
         self.screen = "shelf"
         self._restore()
 
@@ -108,22 +105,29 @@ class Session:
 
     def kept_liquids(self) -> frozenset[str]:
         """Return the ids of the liquids on the current shortlist."""
-        return frozenset(e.a for e in self._entries() if e.kind == "liquid")
+        return frozenset(e.a for e in self.entries() if e.kind == "liquid")
 
     def keep_liquid(self, liquid: str) -> str:
         """Put a liquid on the current shortlist; return what happened, in words."""
-        added = self.store.add_liquid(self.shortlist, liquid)
+        added = self.store.add(self.shortlist, Entry(liquid))
         return f"{liquid} {'put on' if added else 'is already on'} {self.shortlist}"
 
     def keep_pair(self, a: str, b: str) -> str:
         """Put a pair on the current shortlist; return what happened, in words."""
-        added = self.store.add_pair(self.shortlist, a, b)
+        added = self.store.add(self.shortlist, Entry.pair(a, b))
         return f"{a} + {b} {'put on' if added else 'is already on'} {self.shortlist}"
 
-    def _entries(self) -> Sequence[Entry]:
-        return (
-            self.store.entries(self.shortlist) if self.shortlist in self.store.shortlists() else ()
-        )
+    def entries(self) -> list[Entry]:
+        """Return the current shortlist; one that another program deleted is empty."""
+        try:
+            return self.store.entries(self.shortlist)
+        except UnknownShortlist:
+            return []
+
+    def use_shortlist(self, name: str) -> None:
+        """Switch to a shortlist, made if there is none of this name."""
+        self.shortlist = self.store.create(name)
+        self.save()
 
     def save(self) -> None:
         """Write the state to the store."""

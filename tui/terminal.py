@@ -103,6 +103,8 @@ class TerminalApp(App[int]):
         if not self.is_headless:
             self._end_on_signals()
         self.screen_change_signal.subscribe(self, lambda _: self._fit())
+        # Back from a suspension at the same size, Textual would leave the screen blank.
+        self.app_resume_signal.subscribe(self, lambda _: self.refresh(layout=True))
         self.call_after_refresh(self._fit)
 
     def on_resize(self) -> None:

@@ -21,6 +21,7 @@ from stillroom.chem.shelf.tables import (
     Hazard,
     Record,
     Source,
+    fingerprint,
     preferred_columns,
     read_hazards,
     read_identities,
@@ -70,6 +71,11 @@ class Shelf:
     def hazards(self) -> Mapping[str, Sequence[Hazard]]:
         """Known dangers by liquid id; an absent liquid means not known here."""
         return read_hazards(self._folder) if self._folder else {}
+
+    @cached_property
+    def data_version(self) -> str:
+        """A short fingerprint of the tables, the same as long as no number or name changes."""
+        return fingerprint(self._folder) if self._folder else "none"
 
     def __len__(self) -> int:
         return len(self.identities)

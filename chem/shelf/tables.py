@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import csv
+import hashlib
 import io
 import math
 from collections.abc import Iterator
@@ -54,6 +55,14 @@ Row = tuple[int, dict[str, str]]
 def shipped() -> Traversable:
     """Return the folder of tables that the program carries."""
     return files("stillroom.datasets")
+
+
+def fingerprint(folder: Traversable) -> str:
+    """Return the first 12 hex digits of the SHA-256 of liquids and values together."""
+    digest = hashlib.sha256()
+    for name in ("liquids.csv", "values.csv"):
+        digest.update((folder / name).read_bytes())
+    return digest.hexdigest()[:12]
 
 
 def rows(folder: Traversable, name: str, needed: tuple[str, ...]) -> Iterator[Row]:

@@ -8,6 +8,7 @@ from typing import ClassVar
 import numpy as np
 from rich.text import Text
 from textual.binding import Binding, BindingType
+from textual.timer import Timer
 from textual.widget import Widget
 from textual.widgets import Static
 
@@ -22,6 +23,8 @@ from stillroom.tui.sheet_text import like_summary
 from stillroom.tui.widgets.grid import Column, Grid
 
 _TEXT_COLUMNS = {"family": ("family", 12), "formula": ("formula", 10), "cas": ("CAS", 11)}
+
+_SAVE_AFTER = 0.7  # seconds of rest before the place of the cursor is kept
 
 
 class ShelfRows:
@@ -91,6 +94,7 @@ class ShelfScreen(WorkScreen):
     def __init__(self) -> None:
         super().__init__()
         self._first = ""
+        self._save_timer: Timer | None = None
 
     def body(self) -> Iterable[Widget]:
         """Return grid and summary."""
@@ -158,7 +162,10 @@ class ShelfScreen(WorkScreen):
         current = self._current()
         if current is not None and current != self.session.view.liquid:
             self.session.view.liquid = current
-            self.session.save()
+            if self._save_timer is not None:
+                self._save_timer.stop()
+            # Not at every key: a save waits for the disk.
+            self._save_timer = self.set_timer(_SAVE_AFTER, self.session.save)
         self._summarise()
 
     def on_grid_chosen(self) -> None:

@@ -11,7 +11,7 @@ from textual.binding import Binding, BindingType
 from textual.widget import Widget
 from textual.widgets import Static
 
-from stillroom.chem.choosing.export import export_csv
+from stillroom.chem.choosing.export import export_csv, package_path
 from stillroom.chem.choosing.shortlist import Entry
 from stillroom.chem.data.errors import StillroomError
 from stillroom.chem.pairs.pair import interact
@@ -22,6 +22,7 @@ from stillroom.tui.screens.base import WorkScreen
 from stillroom.tui.screens.picker import Picker
 from stillroom.tui.sheet_text import like_summary, shares_line, verdict_line
 from stillroom.tui.widgets.grid import Column, Grid
+from stillroom.tui.widgets.prompt import Prompt
 
 _NEW = "(new shortlist)"
 
@@ -79,7 +80,7 @@ class ShortlistScreen(WorkScreen):
 
     def __init__(self) -> None:
         super().__init__()
-        self._removed: tuple[str, Entry] | None = None
+        self._removed: tuple[str, Entry, float] | None = None
 
     def body(self) -> Iterable[Widget]:
         """Return grid and summary."""
@@ -109,7 +110,9 @@ class ShortlistScreen(WorkScreen):
     def _current(self) -> Entry | None:
         grid = self.query_one(Grid)
         source = grid.source
-        return source.entries[grid.cursor] if isinstance(source, EntryRows) and len(source) else None
+        return (
+            source.entries[grid.cursor] if isinstance(source, EntryRows) and len(source) else None
+        )
 
     def _summarise(self) -> None:
         entry, summary = self._current(), self.query_one("#summary", Static)
@@ -167,8 +170,8 @@ class ShortlistScreen(WorkScreen):
         entry = self._current()
         if entry is None:
             return
-        self.session.store.remove(self.session.shortlist, entry)
-        self._removed = (self.session.shortlist, entry)
+        place = self.session.store.remove(self.session.shortlist, entry)
+        self._removed = (self.session.shortlist, entry, place)
         self._show(self.query_one(Grid).cursor)
         self.say(f"{entry.title} removed; u brings it back")
 
@@ -177,9 +180,9 @@ class ShortlistScreen(WorkScreen):
         if self._removed is None:
             self.say("nothing to bring back")
             return
-        name, entry = self._removed
+        name, entry, place = self._removed
         self._removed = None
-        self.session.store.restore(name, entry)
+        self.session.store.add(name, entry, place)
         self._show(self.query_one(Grid).cursor)
         self.say(f"{entry.title} is back on {name}")
 
@@ -218,10 +221,13 @@ class ShortlistScreen(WorkScreen):
             try:
                 export_csv(self.session.entries(), self.session.shelf, path)
             except StillroomError as problem:
-                self.ask("export to", text, submitted, placeholder="a new file, such as list.csv")
-                self.prompt_error(str(problem))
+                again(text, str(problem))
                 return
-            self.say(f"exported to {path} and {path.with_suffix('.datapackage.json').name}")
+            self.say(f"exported to {path}; {package_path(path).name} beside it explains it")
+
+        def again(text: str, problem: str) -> None:
+            self.ask("export to", text, submitted, placeholder="a new file, such as list.csv")
+            self.query_one(Prompt).show_error(problem)
 
         value = f"{self.session.shortlist}.csv"
         self.ask("export to", value, submitted, placeholder="a new file, such as list.csv")

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-import math
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
 from dataclasses import dataclass
 from typing import Any
 
@@ -40,29 +39,32 @@ class Series:
 
 @dataclass(frozen=True, slots=True)
 class _Axis:
-    """Places numbers on `cells` cells; `scale` is the identity or the decadic logarithm."""
+    """Places numbers on `cells` cells, evenly or by their logarithm."""
 
     low: float
     high: float
     cells: int
-    scale: Callable[[Any], Any]
+    log: bool = False
 
     def __post_init__(self) -> None:
-        with np.errstate(divide="ignore", invalid="ignore"):
-            possible = self.high > self.low and math.isfinite(self.scale(self.low))
-        if not possible:
+        if not self.high > self.low or (self.log and self.low <= 0):
             raise ValueError(f"no axis from {self.low} to {self.high}")
+
+    def scaled(self, values: ArrayLike) -> NDArray[np.float64]:
+        """Return the numbers on the scale of the axis, NaN where it has no place for them."""
+        numbers = np.asarray(values, dtype=float)
+        return np.log10(np.where(numbers > 0, numbers, np.nan)) if self.log else numbers
 
     def place(self, value: float) -> int | None:
         """Return the cell of a number, None if it is not finite or off the axis."""
-        at = self.scale(value) if math.isfinite(value) else math.nan
-        share = (at - self.scale(self.low)) / (self.scale(self.high) - self.scale(self.low))
-        inside = -1e-9 <= share <= 1 + 1e-9
-        return round(share * (self.cells - 1)) if inside else None
+        low, high, at = self.scaled([self.low, self.high, value]).tolist()
+        share = (at - low) / (high - low)
+        return round(share * (self.cells - 1)) if -1e-9 <= share <= 1 + 1e-9 else None
 
     def centres(self) -> NDArray[np.float64]:
         """Return the scaled number at the middle of each cell."""
-        return np.linspace(self.scale(self.low), self.scale(self.high), self.cells)
+        low, high = self.scaled([self.low, self.high])
+        return np.linspace(float(low), float(high), self.cells)
 
 
 def plot(
@@ -96,12 +98,11 @@ def plot(
     legend = _legend(series, width, max(1, height // 5), mark_label if mark_x is not None else "")
     rows = height - 3 - len(legend)  # the y label, the axis, its numbers
     bottom, top = y_range or _span(ys)
-    y_axis = _Axis(bottom, top, rows, float)
+    y_axis = _Axis(bottom, top, rows)
     y_ticks = ticks(bottom, top, min(rows, max(4, rows // 3)))
     labels = dict(zip(map(y_axis.place, y_ticks), tick_labels(y_ticks), strict=True))
     margin = max(map(len, labels.values()), default=0)
-    scale: Callable[[Any], Any] = np.log10 if x_log else np.float64
-    x_axis = _Axis(low, high, width - margin - 1, scale)
+    x_axis = _Axis(low, high, width - margin - 1, x_log)
 
     cells = _background(x_axis, y_axis, mark_x)
     for (row, column), marks in _occupied(data, x_axis, y_axis).items():
@@ -110,7 +111,7 @@ def plot(
     for row in range(rows - 1, -1, -1):
         label = labels.get(row, "")
         lines.append(f"{label:>{margin}}{'┤' if label else '│'}{''.join(cells[row])}")
-    lines += [" " * margin + line for line in _x_axis_lines(x_axis, x_label, log=x_log)]
+    lines += [" " * margin + line for line in _x_axis_lines(x_axis, x_label)]
     return [Text(line.rstrip()) for line in lines] + legend
 
 
@@ -153,7 +154,7 @@ def _occupied(
         if s.joined and len(x) > 1:
             order = np.argsort(x, kind="stable")
             at = np.interp(
-                x_axis.centres(), x_axis.scale(x[order]), y[order], left=np.nan, right=np.nan
+                x_axis.centres(), x_axis.scaled(x[order]), y[order], left=np.nan, right=np.nan
             )
             places = _joined([y_axis.place(v) for v in at])
         else:
@@ -180,8 +181,8 @@ def _joined(rows: Sequence[int | None]) -> list[tuple[int, int]]:
     return cells
 
 
-def _x_axis_lines(axis: _Axis, label: str, *, log: bool) -> list[str]:
-    find = log_ticks if log else ticks
+def _x_axis_lines(axis: _Axis, label: str) -> list[str]:
+    find = log_ticks if axis.log else ticks
     at = find(axis.low, axis.high, max(2, axis.cells // 9))
     line, numbers = ["─"] * axis.cells, ""
     room = axis.cells + 1 - (cell_len(printable(label)) + 2 if label else 0)
