@@ -3,11 +3,14 @@
 from __future__ import annotations
 
 from collections.abc import Iterable
+from functools import partial
 from pathlib import Path
 from typing import ClassVar
 
+from textual.actions import parse
 from textual.app import SystemCommand
 from textual.binding import Binding, BindingType
+from textual.dom import DOMNode
 from textual.screen import Screen
 
 from stillroom.chem.choosing.store import Store
@@ -23,6 +26,8 @@ from stillroom.tui.screens.shelf import ShelfScreen
 from stillroom.tui.screens.shortlist import ShortlistScreen
 from stillroom.tui.session import Session
 from stillroom.tui.terminal import TerminalApp
+from stillroom.tui.widgets.grid import Grid
+from stillroom.tui.widgets.keys import key_name
 
 MAIN = ("shelf", "pairs", "shortlist")
 
@@ -121,21 +126,31 @@ class Workbench(TerminalApp):
         screen.ask("temperature", value, submitted, check=check, placeholder="40 degC or 313 K")
 
     def get_system_commands(self, screen: Screen[object]) -> Iterable[SystemCommand]:
-        """Offer every action of the present screen in the palette."""
-        seen = set()
+        """Offer every action of the present screen in the palette, in whole sentences."""
+        seen = {"command_palette"}
         for active in screen.active_bindings.values():
-            binding = active.binding
-            if not binding.description or binding.action in seen or not active.enabled:
+            binding, node = active.binding, active.node
+            if binding.action in seen or not isinstance(node, WorkScreen | Workbench | Grid):
                 continue
             seen.add(binding.action)
-            action, node = binding.action, active.node
             yield SystemCommand(
-                f"{binding.description} ({binding.key_display or binding.key})",
-                active.tooltip or "",
-                lambda action=action, node=node: self.call_later(
-                    self.run_action, action, default_namespace=node
-                ),
+                f"{binding.description} ({key_name(binding.key)})",
+                _sentence(node, binding.action),
+                partial(self._run_later, binding.action, node),
             )
+
+    def _run_later(self, action: str, node: DOMNode) -> None:
+        self.call_later(self.run_action, action, default_namespace=node)
+
+
+def _sentence(node: DOMNode, action: str) -> str:
+    """Return the first line of an action's docstring."""
+    _, name, _ = parse(action)
+    for owner in (node, node.app):
+        method = getattr(owner, f"action_{name}", None)
+        if method is not None and method.__doc__:
+            return str(method.__doc__.splitlines()[0])
+    return ""
 
 
 def open_workbench(store_path: Path | None, temperature: str | None) -> int:

@@ -22,7 +22,12 @@ from stillroom.chem.forces.dispersion import (
 )
 from stillroom.chem.liquids.association import kirkwood_factor
 from stillroom.chem.liquids.cohesion import cohesive_energy, solubility_parameter
-from stillroom.chem.liquids.temperature import NEAR, rackett_density_ratio, watson_ratio
+from stillroom.chem.liquids.temperature import (
+    GULDBERG,
+    NEAR,
+    rackett_density_ratio,
+    watson_ratio,
+)
 
 Array = NDArray[np.float64]
 Words = NDArray[np.object_]
@@ -30,6 +35,7 @@ Words = NDArray[np.object_]
 _WEAKNESS = ("measured", "user", "derived", "computed", "estimated")
 _TABULATED = ("vapor_pressure", "permittivity", "refractive_index", "viscosity", "surface_tension")
 _RULE_ERROR = 0.1  # of the change between the two temperatures: our allowance for either rule
+_GUESS_ERROR = 0.3  # the same where the critical temperature is Guldberg's
 _BRIEF = 10.0  # K: a rule used over a shorter span keeps the kind of a derived number
 
 
@@ -49,16 +55,18 @@ def state(stored: Columns, electrons: Array, temperature: float) -> Columns:
     -------
     Columns
         One column of length n for every quantity. Density follows Rackett's equation and the
-        vaporization enthalpy Watson's where a critical temperature is known; other quantities that
-        depend on temperature are kept within 5 K of their own temperature and missing beyond, with
-        a note that says so.
+        vaporization enthalpy Watson's, with the critical temperature or, failing that, one from the
+        boiling point; other quantities that depend on temperature are kept within 5 K of their own
+        temperature and missing beyond, with a note that says so.
     """
     n = electrons.size
     now = {name: stored.get(name) or Column.empty(q, n) for name, q in QUANTITIES.items()}
     critical = now["critical_temperature"].si
-    now["density"] = _carried(now["density"], temperature, critical, rackett_density_ratio)
+    guessed = np.isnan(critical)
+    critical = np.where(guessed, GULDBERG * now["boiling_point"].si, critical)
+    now["density"] = _carried(now["density"], temperature, critical, guessed, rackett_density_ratio)
     now["vaporization_enthalpy"] = _carried(
-        now["vaporization_enthalpy"], temperature, critical, watson_ratio
+        now["vaporization_enthalpy"], temperature, critical, guessed, watson_ratio
     )
     for name in _TABULATED:
         now[name] = _kept_if_near(now[name], temperature)
@@ -79,7 +87,11 @@ def state(stored: Columns, electrons: Array, temperature: float) -> Columns:
 
 
 def _carried(
-    column: Column, temperature: float, critical: Array, rule: Callable[..., Array]
+    column: Column,
+    temperature: float,
+    critical: Array,
+    guessed: NDArray[np.bool_],
+    rule: Callable[..., Array],
 ) -> Column:
     """Carry a column to `temperature` by a ratio rule; missing where the rule cannot be used."""
     shift = temperature - column.temperature
@@ -97,10 +109,12 @@ def _carried(
         weak = "derived" if abs(shift[row]) <= _BRIEF else "estimated"
         kind[row] = max(kind[row], weak, key=_WEAKNESS.index)
         note[row] = f"carried from {_celsius(column.temperature[row])}"
+        if guessed[row]:
+            note[row] += ", critical temperature taken as 1.5 times the boiling point"
     return Column(
         column.quantity,
         column.si * ratio,
-        np.hypot(column.uncertainty * ratio, _RULE_ERROR * moved),
+        np.hypot(column.uncertainty * ratio, np.where(guessed, _GUESS_ERROR, _RULE_ERROR) * moved),
         np.where(np.isnan(column.temperature), np.nan, temperature),
         kind,
         column.source,
@@ -144,8 +158,19 @@ def _derived(
         np.where(own, given.temperature, np.where(present, temperature, np.nan)),
         np.where(own, given.kind, np.where(present, _weakest(inputs), "")),
         np.where(own, given.source, np.where(present, origin, "")),
-        given.note,
+        np.where(own | present, given.note, _why_missing(inputs)),
     )
+
+
+def _why_missing(inputs: list[Column]) -> Words:
+    """Return, row by row, which inputs are missing and why."""
+    words = np.full(inputs[0].si.size, "", dtype=object)
+    for column in inputs:
+        for row in np.flatnonzero(np.isnan(column.si)):
+            reason = f" ({column.note[row]})" if column.note[row] else ""
+            comma = ", " if words[row] else ""
+            words[row] += f"{comma}no {column.quantity.name.replace('_', ' ')}{reason}"
+    return words
 
 
 def _dispersion(now: Columns, electrons: Array) -> Column:

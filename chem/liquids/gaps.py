@@ -13,7 +13,7 @@ DISABLES = {
     "density": "no molar volume, so pairs need a given distance",
     "melting_point": "frozen or not cannot be told",
     "boiling_point": "boiling or not cannot be told",
-    "critical_temperature": "density and vaporization enthalpy do not follow temperature",
+    "critical_temperature": "density and vaporization enthalpy follow temperature less surely",
     "vaporization_enthalpy": "no cohesive energy or solubility parameter",
     "permittivity": "no Kirkwood factor, so association goes unnoticed",
     "refractive_index": "no Kirkwood factor, so association goes unnoticed",

@@ -68,12 +68,13 @@ class Liquid:
     1.85 D (user)
     """
 
-    __slots__ = ("identity", "stored", "temperature", "values")
+    __slots__ = ("identity", "notes", "stored", "temperature", "values")
 
     identity: Identity
     stored: Columns
     temperature: float
     values: Mapping[str, Value]
+    notes: Mapping[str, str]
 
     def __init__(
         self,
@@ -112,6 +113,8 @@ class Liquid:
         self.identity, self.stored, self.temperature = identity, stored, temperature
         found = {name: column.value(0) for name, column in now.items()}
         self.values = {name: value for name, value in found.items() if value is not None}
+        # Why a quantity is missing, where there is a reason.
+        self.notes = {n: c.note[0] for n, c in now.items() if found[n] is None and c.note[0]}
 
     def at(self, temperature: float | str) -> Liquid:
         """Return the same liquid at another temperature (K, or a text with a unit)."""
@@ -135,7 +138,8 @@ class Liquid:
         """
         value = self.values.get(name)
         if value is None:
-            raise MissingValue(self.name, name, consequence)
+            reasons = filter(None, (self.notes.get(name, ""), consequence))
+            raise MissingValue(self.name, name, "; ".join(reasons))
         return value
 
     @property

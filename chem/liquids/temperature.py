@@ -14,6 +14,10 @@ RACKETT_BASE = 0.27
 """Typical Rackett parameter Z_RA of organic liquids, 0.23 to 0.29 (C. F. Spencer, R. P. Danner,
 J. Chem. Eng. Data 17 (1972) 236)."""
 
+GULDBERG = 1.5
+"""Tc/Tb where no critical temperature is known: C. M. Guldberg, Z. phys. Chem. 5 (1890) 374; it
+holds within about 10 % (common practice), enough to carry a density."""
+
 NEAR = 5.0
 """K: a tabulated value is used unchanged within this distance of its temperature."""
 

@@ -188,10 +188,11 @@ def _orientation_reasons(liquid: Liquid) -> Iterator[Reason]:
     structure, g = liquid.identity.structure, liquid.kirkwood_factor
     if structure.flexible_polar_bonds:
         count = structure.flexible_polar_bonds
+        bonds = "1 bond turns" if count == 1 else f"{count} bonds turn"
         yield Reason(
             "conformers",
-            f"{liquid.name}: {count} bond{'s' * (count > 1)} turn its polar groups, so its dipole "
-            "moment is an average over shapes",
+            f"{liquid.name}: {bonds} its polar groups, so its dipole moment is an average over "
+            "shapes",
             float(count),
             "strained",
         )

@@ -108,15 +108,17 @@ class WorkScreen(Screen[None]):
         cancelled: Callable[[], None] | None = None,
         check: Callable[[str], str | None] | None = None,
         placeholder: str = "",
+        select: bool = True,
     ) -> None:
         """Open the prompt line.
 
         `submitted` gets the text on enter, `typed` at every change, `cancelled` is called on
-        escape; `check` returns what is wrong with a text, shown under the line, or None.
+        escape; typing replaces `value` if `select`; `check` returns what is wrong with a text,
+        shown under the line, or None.
         """
         self._on_text, self._on_submit, self._on_cancel = typed, submitted, cancelled
         self.query_one(Prompt).open(
-            title=title, value=value, placeholder=placeholder, validate=check
+            title=title, value=value, placeholder=placeholder, validate=check, select=select
         )
 
     def on_prompt_changed(self, event: Prompt.Changed) -> None:

@@ -132,7 +132,7 @@ class SheetScreen(WorkScreen):
         name, value, _ = grid.source.values[grid.cursor]
         if value is None:
             why = dict(gaps(self.liquid)).get(name, "")
-            note = self.session.shelf.columns[name].note[self.session.shelf.row(self.liquid.id)]
+            note = self.liquid.notes.get(name, "")
             parts = [f"{quantity_words(name)} is not known here", note, why]
             detail.update(Text("; ".join(p for p in parts if p)))
             return

@@ -51,8 +51,8 @@ class EntryRows:
             pair = interact(
                 self._shelf[entry.a], self._shelf[entry.b or entry.a], self._shelf.temperature
             )
-        except StillroomError as problem:
-            return [entry.title, "-", str(problem), entry.note]
+        except StillroomError:  # the summary says what is missing
+            return [entry.title, "-", "-", entry.note]
         total = number(float(pair.terms.total) / 1e3, 2)
         verdict = f"{VERDICT_MARKS[pair.verdict]} {pair.verdict}"
         return [entry.title, total, verdict, entry.note]
@@ -163,7 +163,7 @@ class ShortlistScreen(WorkScreen):
             self.session.store.set_note(self.session.shortlist, entry, text)
             self._show(self.query_one(Grid).cursor)
 
-        self.ask("note", entry.note, submitted, placeholder="why is it on the list?")
+        self.ask("note", entry.note, submitted, placeholder="why is it on the list?", select=False)
 
     def action_remove(self) -> None:
         """Take the entry off; undo brings it back."""

@@ -135,8 +135,12 @@ class Prompt(Widget):
         value: str = "",
         placeholder: str = "",
         validate: Check | None = None,
+        select: bool = False,
     ) -> None:
-        """Show the prompt and take the focus; `placeholder` says what is expected."""
+        """Show the prompt and take the focus; `placeholder` says what is expected.
+
+        With `select`, typing replaces the value; moving in it first keeps it.
+        """
         self._forget_timer()
         self._check, self._hint = validate, printable(placeholder)
         self.query_one("#title", Static).update(Text(f"{printable(title)}: "))
@@ -148,6 +152,8 @@ class Prompt(Widget):
         self._show_note(None)
         self.display = True
         line.focus()
+        if select:
+            line.select_all()
 
     def close(self) -> None:
         """Hide the prompt; a change still waiting to be told is dropped."""
