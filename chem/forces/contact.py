@@ -46,9 +46,10 @@ def contact_distance(molar_volume_a: ArrayLike, molar_volume_b: ArrayLike) -> Ar
 def elongation(longest_path_bonds: ArrayLike, molar_volume: ArrayLike) -> Array:
     """Return a molecule's stretched length over its contact diameter (dimensionless, broadcast).
 
-    Length = bonds on the longest path x `BOND_PROJECTION` + `END_CAPS`. At 1.5 the ends reach a
-    quarter of a diameter beyond the sphere, where r^-6 differs by a factor of 4 from its value at
-    the centre distance: one centre per molecule is then too coarse.
+    Length = bonds on the longest path x `BOND_PROJECTION` + `END_CAPS`. At 1.6 the ends reach
+    0.3 of a diameter beyond the sphere, where r^-6 differs by a factor of 5 from its value at the
+    centre distance: one centre per molecule is then too coarse. For rings the zigzag overstates
+    the length somewhat.
     """
     length = np.asarray(longest_path_bonds, float) * BOND_PROJECTION + END_CAPS
     return length / contact_diameter(molar_volume)

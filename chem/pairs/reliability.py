@@ -32,7 +32,7 @@ KIRKWOOD_RANGE = (0.6, 1.6)
 """Outside, neighbours order each other: alcohols 2.5 to 3.5 (chains), acids below 0.7 (rings);
 liquids without hydrogen bonds mostly 0.7 to 1.3 (J. G. Kirkwood, J. Chem. Phys. 7 (1939) 911)."""
 
-ELONGATED_ABOVE = 1.5
+ELONGATED_ABOVE = 1.6
 """See `stillroom.chem.forces.contact.elongation`."""
 
 

@@ -3,8 +3,7 @@
 from __future__ import annotations
 
 import argparse
-import sys
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from pathlib import Path
 
 from stillroom.chem.choosing.export import export_csv
@@ -76,23 +75,36 @@ def _entries(args: argparse.Namespace, shelf: Shelf) -> list[Entry]:
 
 
 def _add(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
+    done = []
     for entry in _entries(args, shelf):
         added = store.add(args.list, entry)
-        write_text(f"{entry.title}: {'put on' if added else 'already on'} {args.list}")
-    return OK
+        done.append([entry.title, args.list, "put on" if added else "already on"])
+    return _told(args, done)
 
 
 def _remove(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
+    done = []
     for entry in _entries(args, shelf):
         store.remove(args.list, entry)
-        write_text(f"{entry.title}: taken off {args.list}")
-    return OK
+        done.append([entry.title, args.list, "taken off"])
+    return _told(args, done)
 
 
 def _note(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
+    done = []
     for entry in _entries(args, shelf):
         store.set_note(args.list, entry, args.note)
-        write_text(f"{entry.title}: noted")
+        done.append([entry.title, args.list, "noted"])
+    return _told(args, done)
+
+
+def _told(args: argparse.Namespace, done: Sequence[Sequence[str]]) -> int:
+    """Print what was done to each entry."""
+    if args.format == "text":
+        for title, name, result in done:
+            write_text(f"{title}: {result} {name}")
+    else:
+        write_table(args.format, ["entry", "list", "result"], done)
     return OK
 
 
@@ -116,8 +128,7 @@ def _lists(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
 def _export(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
     entries = store.entries(args.list)
     files = export_csv(entries, shelf, args.file, name=args.list, overwrite=args.overwrite)
-    for path in files:
-        write_text(str(path))
+    write_table(args.format, ["written"], [[str(path)] for path in files])
     return OK
 
 
@@ -125,9 +136,10 @@ def _reopen(args: argparse.Namespace, shelf: Shelf, store: Store) -> int:
     found = reopen(args.file, shelf)
     name = store.create(args.list)
     added = sum(store.add(name, entry) for entry in found.entries)
-    write_text(f"{added} of {len(found.entries)} entries put on {name}")
-    for change in found.changes:
-        sys.stderr.write(f"changed since the export: {change}\n")
-    if not found.changes:
-        write_text("nothing has changed since the export")
+    if args.format == "text":
+        write_text(f"{added} of {len(found.entries)} entries put on {name}")
+        for change in found.changes or ["nothing"]:
+            write_text(f"changed since the export: {change}")
+    else:
+        write_table(args.format, ["changed"], [[change] for change in found.changes])
     return OK

@@ -41,8 +41,8 @@ class PairRows:
         self.shelf, self.ranking, self.order = shelf, ranking, order
         self._book = book
         self.columns = [
-            Column("a", "first", 16),
-            Column("b", "second", 16),
+            Column("a", "first", 16, grow_to=36),
+            Column("b", "second", 16, grow_to=36),
             Column("bar", "or/in/disp", _BAR),
             *(Column(k, t, w, align="right", unit=u) for k, t, u, w, _ in _NUMBERS),
             Column("leading_order_error", "lead err", 8, align="right"),

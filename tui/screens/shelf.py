@@ -43,7 +43,7 @@ class ShelfRows:
         self._names = list(columns)
         self._kept = kept
         self._marked = marked
-        self.columns = [Column("name", "name", 22), *map(_column, columns)]
+        self.columns = [Column("name", "name", 22, grow_to=40), *map(_column, columns)]
 
     def __len__(self) -> int:
         return len(self.rows)
