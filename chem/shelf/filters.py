@@ -7,7 +7,8 @@
     operand    = quantity | number [unit] | text
     operator   = "<" | "<=" | ">" | ">=" | "=" | "==" | "!=" | "~"
 
-Text columns (`name`, `family`, `formula`, `cas`, `id`, `hazard`) take `=`, `!=` and `~` (contains).
+Text columns (`name`, `family`, `formula`, `cas`, `id`, `hazard`) take `=`, `!=` and `~` (contains);
+a synonym counts as a name.
 A comparison with a missing value is false, whatever the operator; `known(quantity)` asks whether
 there is one. The text is parsed here and never evaluated as Python.
 """
@@ -38,8 +39,8 @@ class Table(Protocol):
     def numbers(self, name: str) -> NDArray[np.float64]:
         """Return a quantity in SI, shape (n,)."""
 
-    def texts(self, name: str) -> Sequence[str]:
-        """Return a text field, n entries."""
+    def texts(self, name: str) -> Sequence[Sequence[str]]:
+        """Return a text field, n entries, each with all its alternatives (such as synonyms)."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -240,8 +241,8 @@ class _Parser:
         wanted = " ".join(t.text for t in other).strip("\"'").casefold()
         values = self.table.texts(name)
         if operator == "~":
-            return np.array([wanted in v.casefold() for v in values], dtype=bool)
+            return np.array([any(wanted in t.casefold() for t in v) for v in values], dtype=bool)
         if operator not in ("=", "!="):
             raise BadExpression(self.expression, other[0].position, "= != or ~ for a text column")
-        same = np.array([v.casefold() == wanted for v in values], dtype=bool)
+        same = np.array([any(t.casefold() == wanted for t in v) for v in values], dtype=bool)
         return same if operator == "=" else ~same

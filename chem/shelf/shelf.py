@@ -161,7 +161,7 @@ class Shelf:
         names = np.array([who.name for who in self.identities])
         by_name = np.argsort(names, kind="stable")
         if name in filters.TEXT_FIELDS:
-            keys = np.array([t.casefold() for t in self.texts(name)])[by_name]
+            keys = np.array([" ".join(t[:1]).casefold() for t in self.texts(name)])[by_name]
             order = np.argsort(keys, kind="stable")
             return by_name[order[::-1] if descending else order]
         numbers = self.column(name).si[by_name]
@@ -174,14 +174,16 @@ class Shelf:
         """Return a quantity in SI, shape (n,)."""
         return self.columns[name].si
 
-    def texts(self, name: str) -> Sequence[str]:
+    def texts(self, name: str) -> Sequence[Sequence[str]]:
         """Return a text field (one of `filters.TEXT_FIELDS`) for every liquid."""
+        if name == "name":
+            return [(who.name, *who.synonyms) for who in self.identities]
         if name == "hazard":
             return [
-                " ".join(f"{h.hazard} {h.detail}" for h in self.hazards.get(who.id, ()))
+                tuple(f"{h.hazard} {h.detail}" for h in self.hazards.get(who.id, ()))
                 for who in self.identities
             ]
-        return [getattr(who, name) for who in self.identities]
+        return [(getattr(who, name),) for who in self.identities]
 
 
 def load_shelf(folder: Traversable | None = None, temperature: float | str = 298.15) -> Shelf:
