@@ -2,7 +2,7 @@
 
 >>> from stillroom.chem import interact, load_shelf
 >>> shelf = load_shelf()
->>> interact(shelf["acetone"], shelf["n-hexane"]).verdict
+>>> interact(shelf["acetone"], shelf["cyclohexane"]).verdict
 'sound'
 """
 

@@ -183,7 +183,7 @@ class TestReopening:
             reopen(exported, shelf)
 
     def test_missing_files(self, exported: Path, shelf: Shelf, tmp_path: Path) -> None:
-        with pytest.raises(BadFile, match="nothing.csv"):
+        with pytest.raises(BadFile, match=r"nothing\.csv"):
             reopen(tmp_path / "nothing.csv", shelf)
         package_path(exported).write_text("{}", encoding="utf-8")
         with pytest.raises(BadFile, match="not the data package"):
