@@ -97,14 +97,34 @@ class TestList:
     def test_all_columns_carry_their_unit(self, capsys: Captured) -> None:
         _, out, _ = run(capsys, "list", "--columns", "all", "--format", "csv")
         header = next(csv.reader(io.StringIO(out)))
-        for column in (
-            "name cas smiles formula family dipole_D polarizability_A3 ionization_energy_eV "
-            "c6_1e-79_J_m6 molar_mass_g_mol density_kg_m3 molar_volume_cm3_mol melting_point_degC "
-            "boiling_point_degC vaporization_enthalpy_kJ_mol vapor_pressure_kPa permittivity "
-            "refractive_index viscosity_mPa_s surface_tension_mN_m flash_point_degC "
-            "cohesive_energy_kJ_mol solubility_parameter_MPa0.5 kirkwood_factor hbond_acidity "
-            "hbond_basicity"
-        ).split():
+        for column in [
+            "name",
+            "cas",
+            "smiles",
+            "formula",
+            "family",
+            "dipole_D",
+            "polarizability_A3",
+            "ionization_energy_eV",
+            "c6_1e-79_J_m6",
+            "molar_mass_g_mol",
+            "density_kg_m3",
+            "molar_volume_cm3_mol",
+            "melting_point_degC",
+            "boiling_point_degC",
+            "vaporization_enthalpy_kJ_mol",
+            "vapor_pressure_kPa",
+            "permittivity",
+            "refractive_index",
+            "viscosity_mPa_s",
+            "surface_tension_mN_m",
+            "flash_point_degC",
+            "cohesive_energy_kJ_mol",
+            "solubility_parameter_MPa0.5",
+            "kirkwood_factor",
+            "hbond_acidity",
+            "hbond_basicity",
+        ]:
             assert column in header
 
     def test_filter_with_units(self, capsys: Captured) -> None:

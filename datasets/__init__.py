@@ -1,0 +1,1 @@
+"""The sourced tables that stillroom ships, as plain CSV files."""

@@ -1,0 +1,1 @@
+"""Steps of the data build, one responsibility each."""
