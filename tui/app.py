@@ -42,7 +42,7 @@ class Workbench(TerminalApp):
         Binding("1", "go('shelf')", "shelf"),
         Binding("2", "go('pairs')", "pairs"),
         Binding("3", "go('shortlist')", "shortlist"),
-        Binding("t", "temperature", "temperature"),
+        Binding("t", "temperature", "temp"),
         Binding("question_mark", "help", "help"),
         Binding("ctrl+p", "command_palette", "all"),
         Binding("q", "quit", "quit"),

@@ -6,7 +6,7 @@ import csv
 import hashlib
 import io
 import math
-from collections.abc import Iterator
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from importlib.resources import files
 from importlib.resources.abc import Traversable
@@ -51,6 +51,8 @@ class Record:
 
 Row = tuple[int, dict[str, str]]
 
+VALUES = "values.csv"
+
 
 def shipped() -> Traversable:
     """Return the folder of tables that the program carries."""
@@ -65,13 +67,16 @@ def fingerprint(folder: Traversable) -> str:
     return digest.hexdigest()[:12]
 
 
-def rows(folder: Traversable, name: str, needed: tuple[str, ...]) -> Iterator[Row]:
-    """Yield each row of a CSV file with its line number, columns by name.
+def cells(
+    folder: Traversable, name: str, needed: tuple[str, ...]
+) -> tuple[list[str], Iterator[tuple[int, list[str]]]]:
+    """Return the header of a CSV file, and its rows with their line numbers.
 
     Raises
     ------
     BadFile
-        If the file is missing, not UTF-8 CSV, or lacks one of the `needed` columns.
+        If the file is missing, not UTF-8 CSV, or lacks one of the `needed` columns; while the rows
+        are read, if one has too many or too few cells.
     """
     path = folder / name
     try:
@@ -85,11 +90,22 @@ def rows(folder: Traversable, name: str, needed: tuple[str, ...]) -> Iterator[Ro
     missing = [c for c in needed if c not in header]
     if missing:
         raise BadFile(name, f"has no column {', '.join(missing)}", row=1)
-    for cells in reader:
-        if len(cells) != len(header):
-            problem_ = f"{len(cells)} cells, expected {len(header)}"
-            raise BadFile(name, problem_, row=reader.line_num)
-        yield reader.line_num, dict(zip(header, cells, strict=True))
+
+    def checked() -> Iterator[tuple[int, list[str]]]:
+        width = len(header)
+        for row in reader:
+            if len(row) != width:
+                raise BadFile(name, f"{len(row)} cells, expected {width}", row=reader.line_num)
+            yield reader.line_num, row
+
+    return header, checked()
+
+
+def rows(folder: Traversable, name: str, needed: tuple[str, ...]) -> Iterator[Row]:
+    """Yield each row of a CSV file with its line number, cells by column; raises as `cells`."""
+    header, lines = cells(folder, name, needed)
+    for line, row in lines:
+        yield line, dict(zip(header, row, strict=True))
 
 
 def read_identities(folder: Traversable) -> list[Identity]:
@@ -136,45 +152,77 @@ def _structure(name: str, line: int, row: dict[str, str]) -> Structure:
     )
 
 
-def read_records(folder: Traversable) -> dict[str, list[Record]]:
-    """Return every value of every liquid, by liquid id, in file order."""
-    name = "values.csv"
+class Records(Mapping[str, Sequence[Record]]):
+    """Every value of every liquid, by liquid id, in file order.
+
+    Only the cells are held; records are made when somebody asks for a liquid, so that opening the
+    shelf does not wait for seventeen thousand of them.
+    """
+
+    def __init__(self, header: list[str], rows: Iterable[tuple[int, list[str]]]) -> None:
+        self._header = header
+        self._rows: dict[str, list[tuple[int, list[str]]]] = {}
+        key, self._preferred = header.index("id"), header.index("preferred")
+        for line, row in rows:
+            self._rows.setdefault(row[key], []).append((line, row))
+
+    def __getitem__(self, key: str) -> Sequence[Record]:
+        return [self._record(line, row) for line, row in self._rows[key]]
+
+    def __iter__(self) -> Iterator[str]:
+        return iter(self._rows)
+
+    def __len__(self) -> int:
+        return len(self._rows)
+
+    def preferred(self, key: str) -> Iterator[Value]:
+        """Yield the preferred values of a liquid."""
+        for line, row in self._rows.get(key, ()):
+            if row[self._preferred] == "1":
+                yield self._record(line, row).value
+
+    def _record(self, line: int, row: list[str]) -> Record:
+        return _record(line, dict(zip(self._header, row, strict=True)))
+
+
+def read_records(folder: Traversable) -> Records:
+    """Return every value of every liquid."""
     needed = ("id", "quantity", "value", "unit", "temperature_K", "kind", "source", "uncertainty",
-              "preferred")  # fmt: skip
-    found: dict[str, list[Record]] = {}
-    for line, row in rows(folder, name, needed):
-        q = QUANTITIES.get(row["quantity"])
-        if q is None:
-            raise BadFile(name, f"unknown quantity '{row['quantity']}'", line, "quantity")
-        if row["unit"] not in (q.unit, q.unit or "1"):
-            raise BadFile(name, f"unit '{row['unit']}', expected '{q.unit or 1}'", line, "unit")
-        if row["kind"] not in KINDS:
-            raise BadFile(name, f"kind '{row['kind']}', expected {', '.join(KINDS)}", line, "kind")
-        temperature, spread = row["temperature_K"], row["uncertainty"]
-        value = Value(
-            quantity=q.name,
-            number=_number(row["value"], name, line, "value"),
-            unit=q.unit,
-            kind=row["kind"],
-            source=row["source"],
-            uncertainty=_number(spread, name, line, "uncertainty") if spread else math.nan,
-            temperature=_number(temperature, name, line, "temperature_K") if temperature else None,
-            note=row.get("note", ""),
-        )
-        found.setdefault(row["id"], []).append(Record(value, row["preferred"] == "1"))
-    return found
+              "preferred", "note")  # fmt: skip
+    return Records(*cells(folder, VALUES, needed))
 
 
-def preferred_columns(ids: list[str], records: dict[str, list[Record]]) -> Columns:
+def _record(line: int, row: dict[str, str]) -> Record:
+    """Return one row of the values table; raises `BadFile` with row and column."""
+    q = QUANTITIES.get(row["quantity"])
+    if q is None:
+        raise BadFile(VALUES, f"unknown quantity '{row['quantity']}'", line, "quantity")
+    if row["unit"] not in (q.unit, q.unit or "1"):
+        raise BadFile(VALUES, f"unit '{row['unit']}', expected '{q.unit or 1}'", line, "unit")
+    if row["kind"] not in KINDS:
+        raise BadFile(VALUES, f"kind '{row['kind']}', expected {', '.join(KINDS)}", line, "kind")
+    temperature, spread = row["temperature_K"], row["uncertainty"]
+    value = Value(
+        quantity=q.name,
+        number=_number(row["value"], VALUES, line, "value"),
+        unit=q.unit,
+        kind=row["kind"],
+        source=row["source"],
+        uncertainty=_number(spread, VALUES, line, "uncertainty") if spread else math.nan,
+        temperature=_number(temperature, VALUES, line, "temperature_K") if temperature else None,
+        note=row["note"],
+    )
+    return Record(value, row["preferred"] == "1")
+
+
+def preferred_columns(ids: Sequence[str], records: Records) -> Columns:
     """Return one column per quantity with the preferred value of each liquid, in `ids` order."""
     columns: Columns = {}
-    for row, key in enumerate(ids):
-        for record in records.get(key, ()):
-            if record.preferred:
-                value = record.value
-                if value.quantity not in columns:
-                    columns[value.quantity] = Column.empty(value.definition, len(ids))
-                columns[value.quantity].put(row, value)
+    for place, key in enumerate(ids):
+        for value in records.preferred(key):
+            if value.quantity not in columns:
+                columns[value.quantity] = Column.empty(value.definition, len(ids))
+            columns[value.quantity].put(place, value)
     return columns
 
 

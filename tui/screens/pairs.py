@@ -27,7 +27,7 @@ from stillroom.tui.widgets.grid import Column, Grid
 _BAR = 10
 _NUMBERS = (
     ("total_energy_kJ_mol", "total", "kJ/mol", 7, 2),
-    ("interchange_energy_kJ_mol", "interch", "kJ/mol", 7, 2),
+    ("interchange_energy_kJ_mol", "interch", "kJ/mol", 8, 2),
     ("coupling", "x", "", 5, 2),
 )
 

@@ -72,7 +72,7 @@ class SheetScreen(WorkScreen):
     BINDINGS: ClassVar[list[BindingType]] = [
         Binding("v", "every", "all sources"),
         Binding("l", "like_pair", "like pair"),
-        Binding("p", "partners", "partners"),
+        Binding("p", "partners", "rank"),
         Binding("a", "keep", "keep"),
         Binding("escape", "app.step_back", "back"),
     ]

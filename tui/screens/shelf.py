@@ -86,7 +86,7 @@ class ShelfScreen(WorkScreen):
         Binding("r", "reverse", "reverse"),
         Binding("c", "columns", "columns"),
         Binding("x", "pair", "pair"),
-        Binding("p", "partners", "partners"),
+        Binding("p", "partners", "rank"),
         Binding("a", "keep", "keep"),
         Binding("escape", "clear", "clear"),
     ]

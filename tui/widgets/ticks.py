@@ -6,7 +6,7 @@ import math
 from collections.abc import Sequence
 from itertools import pairwise
 
-_STEPS = (1, 2, 5, 10)
+_STEPS = (1, 2, 5)
 
 
 def ticks(low: float, high: float, most: int) -> list[float]:
@@ -21,7 +21,7 @@ def ticks(low: float, high: float, most: int) -> list[float]:
         return []
     raw = (high - low) / most
     power = math.floor(math.log10(raw))
-    for step in (s * 10.0**p for p in (power, power + 1) for s in _STEPS[:3]):
+    for step in (s * 10.0**p for p in (power, power + 1) for s in _STEPS):
         first, last = math.ceil(low / step - 1e-9), math.floor(high / step + 1e-9)
         if last - first + 1 <= most:
             digits = max(0, 1 - math.floor(math.log10(step)))
@@ -32,20 +32,23 @@ def ticks(low: float, high: float, most: int) -> list[float]:
 def log_ticks(low: float, high: float, most: int) -> list[float]:
     """Return at most `most` round numbers for a logarithmic axis.
 
-    1, 2 and 5 in each decade if there is room, else powers of ten, else every few powers; within
-    less than a factor of about three, where no two of these may fall, evenly spaced ones.
+    1, 2 and 5 in each decade if there is room, else powers of ten, else only some of these; where
+    fewer than two of them fall (less than a factor of about three), evenly spaced ones.
     """
     if not 0 < low < high or most < 1:
         return []
     decades = range(math.floor(math.log10(low)), math.ceil(math.log10(high)) + 1)
-    for multiples in ((1, 2, 5), (1,)):
-        found = [float(f"{m}e{d}") for d in decades for m in multiples]
-        found = [t for t in found if low * (1 - 1e-9) <= t <= high * (1 + 1e-9)]
-        if 2 <= len(found) <= most:
-            return found
-    if len(found) > most:
-        return found[:: math.ceil(len(found) / most)]
-    return ticks(low, high, most)
+    fine, powers = (
+        [t for t in marks if low * (1 - 1e-9) <= t <= high * (1 + 1e-9)]
+        for marks in (
+            [float(f"{m}e{d}") for d in decades for m in _STEPS],
+            [float(f"1e{d}") for d in decades],
+        )
+    )
+    if len(fine) < 2:
+        return ticks(low, high, most)
+    found = fine if len(fine) <= most or len(powers) < 2 else powers
+    return found[:: math.ceil(len(found) / most)]
 
 
 def tick_labels(values: Sequence[float]) -> list[str]:

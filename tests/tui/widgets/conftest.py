@@ -52,6 +52,7 @@ class Program:
     """A Python program in a pseudo-terminal of its own."""
 
     LIMIT = 20.0  # seconds to wait for a condition before the test fails
+    PROMPT = "shell> "
 
     def __init__(self, arguments: Sequence[str], size: tuple[int, int], session: bool) -> None:
         self.master, slave = pty.openpty()
@@ -68,7 +69,7 @@ class Program:
             stderr=slave,
             start_new_session=session,
             preexec_fn=own_terminal if session else None,
-            env={**os.environ, "TERM": "xterm-256color", "COLORTERM": ""},
+            env={**os.environ, "TERM": "xterm-256color", "COLORTERM": "", "PS1": self.PROMPT},
         )
         os.close(slave)
 

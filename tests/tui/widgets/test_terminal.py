@@ -247,17 +247,21 @@ class TestSignals:
 def test_with_a_shell_it_suspends_and_comes_back(run_in_terminal, tmp_path):
     (tmp_path / "show.py").write_text(SCRIPT, encoding="utf-8")
     shell = run_in_terminal("", shell=True)
+    prompt = shell.PROMPT.encode()
+    shell.wait_for_text(prompt)
     shell.send(f"{sys.executable} {tmp_path}/show.py\n".encode())
     shell.wait_for_text(b"row 20 ")
     start = len(shell.output)
     shell.send(b"\x1a")
-    shell.wait_for_text(b"Stopped", start)
+    shell.wait_for_text(prompt, start)
+    assert b"Stopped" in shell.output[start:]
     assert RESTORED[0] in shell.output[start:]
     start = len(shell.output)
     shell.send(b"fg\n")
     shell.wait_for_text(b"row 20 ", start)
+    start = len(shell.output)
     shell.send(b"q")
-    shell.wait_for_text(RESTORED[0], start)
+    shell.wait_for_text(prompt, start)
     shell.send(b"exit\n")
     shell.wait_for(shell.ended)
     assert (tmp_path / "show.py.log").read_text() == "unmounted finished"
