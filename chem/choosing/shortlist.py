@@ -40,6 +40,11 @@ class Entry:
         """What makes it the same entry: both ids."""
         return self.a, self.b
 
+    def names(self, shelf: Shelf) -> str:
+        """Return what the shelf calls it; ids where it knows no name."""
+        gone = self.missing_from(shelf)
+        return " + ".join(i if i in gone else shelf[i].name for i in self.key if i)
+
     def missing_from(self, shelf: Shelf) -> list[str]:
         """Return the ids that are no longer on the shelf."""
         gone = []

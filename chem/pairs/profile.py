@@ -14,10 +14,10 @@ from stillroom.chem.pairs.terms import PairTerms, pair_terms
 def along_distance(pair: PairInteraction, distances: ArrayLike | None = None) -> PairTerms:
     """Return the terms of `pair` at `distances` (m, shape (n,)), temperature unchanged.
 
-    By default 60 distances from 0.9 to 2.0 times the pair's own.
+    By default 60 distances from 0.95 to 2.0 times the pair's own.
     """
     if distances is None:
-        distances = pair.distance * np.linspace(0.9, 2.0, 60)
+        distances = pair.distance * np.linspace(0.95, 2.0, 60)
     a, b = pair_molecules(pair)
     return pair_terms(a, b, distances, pair.temperature, pair.model)
 

@@ -31,6 +31,13 @@ class Source:
     isbn: str
     note: str
 
+    @property
+    def full(self) -> str:
+        """Citation, year and number in one line."""
+        year = "" if self.year in self.citation else self.year
+        number = f"doi:{self.doi}" if self.doi else f"ISBN {self.isbn}" if self.isbn else ""
+        return " ".join(part for part in (self.citation, year, number) if part)
+
 
 @dataclass(frozen=True, slots=True)
 class Hazard:

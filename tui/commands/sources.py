@@ -34,17 +34,8 @@ def run(args: argparse.Namespace) -> int:
     chosen = _chosen(shelf, args.of)
     if args.format == "text":
         for source in chosen:
-            numbers = " ".join(
-                part
-                for part in (
-                    source.year,
-                    f"doi:{source.doi}" if source.doi else "",
-                    f"ISBN {source.isbn}" if source.isbn else "",
-                )
-                if part
-            )
             write_text(f"{source.key}  ({counts[source.key]} values)")
-            write_text(f"    {source.citation} {numbers}".rstrip())
+            write_text(f"    {source.full}")
             if source.note:
                 write_text(f"    {source.note}")
         return OK

@@ -11,6 +11,7 @@ from textual.containers import VerticalScroll
 from textual.widget import Widget
 from textual.widgets import Static
 
+from stillroom.chem.choosing.shortlist import Entry
 from stillroom.chem.data.errors import StillroomError
 from stillroom.chem.data.units import parse_distance
 from stillroom.chem.forces.dispersion import MODELS
@@ -54,7 +55,7 @@ class PairScreen(WorkScreen):
 
     def heading(self) -> str:
         """Name both liquids."""
-        return " + ".join(self.pair_ids)
+        return Entry.pair(*self.pair_ids).names(self.session.shelf)
 
     def take_focus(self) -> None:
         """Focus the reasons, which may scroll."""

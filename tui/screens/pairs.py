@@ -125,13 +125,17 @@ class PairsScreen(WorkScreen):
         scope = {
             "all": "whole shelf",
             "filtered": "filtered shelf" if self.session.view.filter else "whole shelf",
-            "with": f"{view.partner} with the rest",
+            "with": f"{self._partner_name()} with the rest",
         }[view.scope]
         end = "largest" if self._descending() else "smallest"
         found = f", name {view.names}" if view.names else ""
         out = self._ranking.left_out.size if isinstance(source, PairRows) else 0
         lacking = f" ({out} liquids lack a value)" if out else ""
         return f"{count} pairs, {scope}{found}, by {view.key}, {end} first{lacking}"
+
+    def _partner_name(self) -> str:
+        partner, shelf = self.session.pairs.partner, self.session.shelf
+        return shelf.identities[shelf.row(partner)].name if partner in shelf else partner
 
     def _descending(self) -> bool:
         view = self.session.pairs
@@ -186,7 +190,7 @@ class PairsScreen(WorkScreen):
         self._ranking, self._shelf, self._book = ranking, shelf, VerdictBook(shelf)
         self._show(0)
         if not len(ranking) and self.session.pairs.scope == "with":
-            self.say(f"{self.session.pairs.partner} lacks a value here, so it has no pairs")
+            self.say(f"{self._partner_name()} lacks a value here, so it has no pairs")
 
     def _show(self, cursor: int) -> None:
         order = np.arange(len(self._ranking))

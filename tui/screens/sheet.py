@@ -137,9 +137,7 @@ class SheetScreen(WorkScreen):
             detail.update(Text("; ".join(p for p in parts if p)))
             return
         source = self.session.shelf.sources.get(value.source)
-        lines = [f"{value.source}: {source.citation} {source.year}" if source else value.source]
-        if source and (source.doi or source.isbn):
-            lines[0] += f" doi:{source.doi}" if source.doi else f" ISBN {source.isbn}"
+        lines = [f"{value.source}: {source.full}" if source else value.source]
         if value.note:
             lines.append(value.note)
         elif source and source.note:

@@ -52,10 +52,10 @@ class EntryRows:
                 self._shelf[entry.a], self._shelf[entry.b or entry.a], self._shelf.temperature
             )
         except StillroomError:  # the summary says what is missing
-            return [entry.title, "-", "-", entry.note]
+            return [entry.names(self._shelf), "-", "-", entry.note]
         total = number(float(pair.terms.total) / 1e3, 2)
         verdict = f"{VERDICT_MARKS[pair.verdict]} {pair.verdict}"
-        return [entry.title, total, verdict, entry.note]
+        return [entry.names(self._shelf), total, verdict, entry.note]
 
     def marker(self, row: int) -> str:
         """Return `&` for a pair."""
