@@ -9,8 +9,7 @@ import signal
 import sys
 import threading
 import time
-from types import FrameType
-from typing import ClassVar
+from typing import Any, ClassVar
 
 from rich.text import Text
 from textual import events
@@ -140,20 +139,33 @@ class TerminalApp(App[int]):
         else:
             self.notify("there is no shell to come back from; q quits", markup=False)
 
+    def run(self, **options: Any) -> int | None:
+        """Run with the ending signals blocked, so that only the thread that waits gets them."""
+        if not hasattr(signal, "pthread_sigmask"):
+            return super().run(**options)
+        before = signal.pthread_sigmask(signal.SIG_BLOCK, _ENDING)
+        try:
+            return super().run(**options)
+        finally:
+            signal.pthread_sigmask(signal.SIG_SETMASK, before)
+
     def _end_on_signals(self) -> None:
-        loop = asyncio.get_running_loop()
+        """Wait for an ending signal in a thread of its own.
 
-        def end(number: int, frame: FrameType | None) -> None:
-            del frame
-            with contextlib.suppress(RuntimeError):  # the loop has ended already
-                loop.call_soon_threadsafe(lambda: self.exit(return_code=128 + number))
-            threading.Thread(target=_end_by_force, args=(number, settings), daemon=True).start()
+        Neither `loop.add_signal_handler` nor `signal.signal` is enough: when a stalled line has
+        filled the queue of output, the main thread waits in a write and never gets to a handler,
+        least of all when the system hands the signal to another thread.
+        """
+        if hasattr(signal, "sigwait"):
+            settings = getattr(self._driver, "attrs_before", None)
+            arguments = (asyncio.get_running_loop(), settings)
+            threading.Thread(target=self._wait_for_end, args=arguments, daemon=True).start()
 
-        # Not `loop.add_signal_handler`: when a stalled line has filled the queue of output, the
-        # loop waits in a write and would never get to its handlers.
-        settings = getattr(self._driver, "attrs_before", None)
-        for number in _ENDING:
-            signal.signal(number, end)
+    def _wait_for_end(self, loop: asyncio.AbstractEventLoop, settings: list[object] | None) -> None:
+        number = signal.sigwait(_ENDING)
+        with contextlib.suppress(RuntimeError):  # the loop has ended already
+            loop.call_soon_threadsafe(lambda: self.exit(return_code=128 + number))
+        _end_by_force(number, settings)
 
 
 def _end_by_force(number: int, settings: list[object] | None) -> None:
