@@ -101,7 +101,7 @@ _ALL = (
     ),
     Quantity(
         "c6", "dispersion C6 of the like pair", "C6", "1e-79*joule*meter**6", "1e-79_J_m6", 1e-79,
-        0.1, 1e5, 1, derived=True,
+        0.1, 1e5, 1, also=(("joule*meter**6", 1.0),), derived=True,
     ),
     Quantity("molar_mass", "molar mass", "M", "g/mol", "g_mol", 1e-3, 1.0, 2000.0, 2),
     Quantity("density", "density", "density", "kg/m**3", "kg_m3", 1.0, 300.0, 5000.0, 1),
