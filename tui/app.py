@@ -26,7 +26,6 @@ from stillroom.tui.screens.shelf import ShelfScreen
 from stillroom.tui.screens.shortlist import ShortlistScreen
 from stillroom.tui.session import Session
 from stillroom.tui.terminal import TerminalApp
-from stillroom.tui.widgets.grid import Grid
 from stillroom.tui.widgets.keys import key_name
 
 MAIN = ("shelf", "pairs", "shortlist")
@@ -130,7 +129,7 @@ class Workbench(TerminalApp):
         seen = {"command_palette"}
         for active in screen.active_bindings.values():
             binding, node = active.binding, active.node
-            if binding.action in seen or not isinstance(node, WorkScreen | Workbench | Grid):
+            if binding.action in seen or binding.key not in _own_keys(type(node)):
                 continue
             seen.add(binding.action)
             yield SystemCommand(
@@ -141,6 +140,17 @@ class Workbench(TerminalApp):
 
     def _run_later(self, action: str, node: DOMNode) -> None:
         self.call_later(self.run_action, action, default_namespace=node)
+
+
+def _own_keys(node: type[DOMNode]) -> set[str]:
+    """Return the keys that our own classes bind, not those that come with Textual's."""
+    found: set[str] = set()
+    for kind in node.__mro__:
+        if kind.__module__.startswith("stillroom."):
+            for binding in vars(kind).get("BINDINGS", ()):
+                key = binding.key if isinstance(binding, Binding) else binding[0]
+                found.update(key.split(","))
+    return found
 
 
 def _sentence(node: DOMNode, action: str) -> str:

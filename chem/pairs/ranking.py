@@ -182,6 +182,8 @@ def rank(
     considered = 0
     for a, b, done, total in _blocks(chosen, partner, like, usable):
         values = evaluator.columns(a, b)[key.column]
+        known = ~np.isnan(values)  # no model for a pair whose inputs are of different kinds
+        a, b, values = a[known], b[known], values[known]
         considered += a.size
         best = _keep(best, (a, b, values), top, descending)
         if progress is not None and not progress(done, total):

@@ -12,6 +12,7 @@ from textual.timer import Timer
 from textual.widget import Widget
 from textual.widgets import Static
 
+from stillroom.chem.data.clean import clean_text
 from stillroom.tui.formatting import celsius
 from stillroom.tui.session import Session
 from stillroom.tui.widgets.keys import KeyLine
@@ -80,7 +81,7 @@ class WorkScreen(Screen[None]):
             (self.name_in_heading, "bold reverse"),
             (f" {celsius(self.session.temperature)} ", "bold"),
             " ",
-            (self._message, "bold") if self._message else self.heading(),
+            (clean_text(self._message), "bold") if self._message else clean_text(self.heading()),
             no_wrap=True,
             overflow="ellipsis",
         )
@@ -144,4 +145,9 @@ class WorkScreen(Screen[None]):
             self._on_cancel()
 
     def take_focus(self) -> None:
-        """Put the focus where the keys of the screen work."""
+        """Put the focus where the keys of the screen work; an open prompt keeps it."""
+        if not self.query_one(Prompt).is_open:
+            self.focus_body()
+
+    def focus_body(self) -> None:
+        """Put the focus on the widget that takes the screen's keys."""

@@ -106,7 +106,7 @@ class HelpScreen(WorkScreen):
         """Return the text."""
         yield VerticalScroll(Static(Text(help_text())), id="help")
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the text, which scrolls."""
         self.query_one("#help").focus()
 

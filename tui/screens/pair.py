@@ -57,7 +57,7 @@ class PairScreen(WorkScreen):
         """Name both liquids."""
         return Entry.pair(*self.pair_ids).names(self.session.shelf)
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the reasons, which may scroll."""
         self.query_one("#reasons-box").focus()
 

@@ -129,9 +129,7 @@ class PairsScreen(WorkScreen):
         }[view.scope]
         end = "largest" if self._descending() else "smallest"
         found = f", name {view.names}" if view.names else ""
-        out = self._ranking.left_out.size if isinstance(source, PairRows) else 0
-        lacking = f" ({out} liquids lack a value)" if out else ""
-        return f"{count} pairs, {scope}{found}, by {view.key}, {end} first{lacking}"
+        return f"{count} pairs, {scope}{found}, by {view.key}, {end} first"
 
     def _partner_name(self) -> str:
         partner, shelf = self.session.pairs.partner, self.session.shelf
@@ -141,7 +139,7 @@ class PairsScreen(WorkScreen):
         view = self.session.pairs
         return KEYS[view.key].largest_first if view.ascending is None else not view.ascending
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the grid."""
         self.query_one(Grid).focus()
 
@@ -222,7 +220,10 @@ class PairsScreen(WorkScreen):
             f"{pair.a.name} + {pair.b.name}",
             shares_line(pair, self.size.width - 2, "at contact"),
         ]
-        summary.update(Text("\n".join([*lines, verdict_line(pair)])))
+        lines.append(verdict_line(pair))
+        if out := self._ranking.left_out.size:
+            lines.append(f"{out} liquids left out: no dipole moment, polarizability or volume here")
+        summary.update(Text("\n".join(lines)))
 
     def on_grid_moved(self) -> None:
         """Sum up the pair under the cursor."""

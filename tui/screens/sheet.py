@@ -97,7 +97,7 @@ class SheetScreen(WorkScreen):
         who = self.liquid.identity
         return f"{who.name}  {who.formula}  CAS {who.cas or '-'}  {who.family}"
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the grid."""
         self.query_one(Grid).focus()
 

@@ -109,7 +109,7 @@ class ShelfScreen(WorkScreen):
             text += f", filter: {view.filter}"
         return f"{text}, by {view.sort.replace('_', ' ')}{' down' if view.descending else ''}"
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the grid."""
         self.query_one(Grid).focus()
 

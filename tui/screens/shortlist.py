@@ -13,7 +13,7 @@ from textual.widgets import Static
 
 from stillroom.chem.choosing.export import export_csv, package_path
 from stillroom.chem.choosing.shortlist import Entry
-from stillroom.chem.data.errors import StillroomError
+from stillroom.chem.data.errors import CannotWrite, StillroomError
 from stillroom.chem.pairs.pair import interact
 from stillroom.chem.shelf.cautions import caution_line
 from stillroom.chem.shelf.shelf import Shelf
@@ -92,7 +92,7 @@ class ShortlistScreen(WorkScreen):
         source = self.query_one(Grid).source
         return f"{self.session.shortlist}: {len(source)} entries (energies: like pair or pair)"
 
-    def take_focus(self) -> None:
+    def focus_body(self) -> None:
         """Focus the grid."""
         self.query_one(Grid).focus()
 
@@ -220,6 +220,9 @@ class ShortlistScreen(WorkScreen):
             path = Path(text.strip()).expanduser()
             try:
                 export_csv(self.session.entries(), self.session.shelf, path)
+            except CannotWrite as problem:  # the path stands in the line above
+                again(text, f"cannot write: {problem.problem}")
+                return
             except StillroomError as problem:
                 again(text, str(problem))
                 return

@@ -105,14 +105,12 @@ class Prompt(Widget):
 
     def compose(self) -> ComposeResult:
         """Stack the typing line on the note."""
+        line = _Line(select_on_focus=False)
+        line.cursor_blink = False  # it would send bytes for ever
         with Horizontal():
             yield Static(id="title")
-            yield _Line(select_on_focus=False)
+            yield line
         yield Static(id="note")
-
-    def on_mount(self) -> None:
-        """Stop the blinking: it would send bytes for ever."""
-        self._line.cursor_blink = False
 
     @property
     def _line(self) -> Input:

@@ -151,7 +151,7 @@ class TestAsked:
             interact(a, a, temperature=-1.0)
         with pytest.raises(OutsideRange, match="dispersion model"):
             interact(a, a, dispersion="best")
-        with pytest.raises(MissingValue, match="molar volume; .*give a distance"):
+        with pytest.raises(MissingValue, match=r"molar volume; .*give a distance"):
             interact(Liquid("x", dipole=1.0, polarizability=5.0, formula="CH4"), a)
         with pytest.raises(MissingValue, match="dipole"):
             interact(Liquid("x", polarizability=5.0), a)

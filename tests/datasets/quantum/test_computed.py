@@ -120,7 +120,7 @@ def test_factor_is_the_ratio_of_proportional_values_and_ignores_a_wild_one() -> 
 def test_calibrated_errors_reach_what_the_method_is_known_for() -> None:
     """Hybrid functionals with a diffuse basis: regularized errors of 5 % or so.
 
-    Hait and Head-Gordon 2018, 10.1021/acs.jctc.8b00252: PBE0 6 % against coupled cluster; measured
+    Hait and Head-Gordon 2018, 10.1021/acs.jctc.7b01252: good hybrids 4 to 6 %; measured
     moments add their own 0.1 D. D4 polarizabilities: 10.1063/1.5090222, a few per cent.
     """
     table = read("calibration.csv")
