@@ -9,7 +9,7 @@ import signal
 import sys
 import threading
 import time
-from typing import Any, ClassVar
+from typing import ClassVar
 
 from rich.text import Text
 from textual import events
@@ -139,33 +139,30 @@ class TerminalApp(App[int]):
         else:
             self.notify("there is no shell to come back from; q quits", markup=False)
 
-    def run(self, **options: Any) -> int | None:
-        """Run with the ending signals blocked, so that only the thread that waits gets them."""
-        if not hasattr(signal, "pthread_sigmask"):
-            return super().run(**options)
-        before = signal.pthread_sigmask(signal.SIG_BLOCK, _ENDING)
-        try:
-            return super().run(**options)
-        finally:
-            signal.pthread_sigmask(signal.SIG_SETMASK, before)
-
     def _end_on_signals(self) -> None:
-        """Wait for an ending signal in a thread of its own.
+        """Hear of ending signals in a thread of its own.
 
-        Neither `loop.add_signal_handler` nor `signal.signal` is enough: when a stalled line has
-        filled the queue of output, the main thread waits in a write and never gets to a handler,
-        least of all when the system hands the signal to another thread.
+        Neither `loop.add_signal_handler` nor a handler in Python is enough: when a stalled line has
+        filled the queue of output, the main thread waits in a write and gets to neither. Python
+        writes the number of every signal it handles to a pipe, whichever thread the system chose
+        to interrupt; this is where the thread listens.
         """
-        if hasattr(signal, "sigwait"):
-            settings = getattr(self._driver, "attrs_before", None)
-            arguments = (asyncio.get_running_loop(), settings)
-            threading.Thread(target=self._wait_for_end, args=arguments, daemon=True).start()
+        settings = getattr(self._driver, "attrs_before", None)
+        loop = asyncio.get_running_loop()
+        hear, tell = os.pipe()
+        os.set_blocking(tell, False)
+        signal.set_wakeup_fd(tell, warn_on_full_buffer=False)
+        for number in _ENDING:
+            signal.signal(number, lambda *_: None)  # all is done by the thread
 
-    def _wait_for_end(self, loop: asyncio.AbstractEventLoop, settings: list[object] | None) -> None:
-        number = signal.sigwait(_ENDING)
-        with contextlib.suppress(RuntimeError):  # the loop has ended already
-            loop.call_soon_threadsafe(lambda: self.exit(return_code=128 + number))
-        _end_by_force(number, settings)
+        def listen() -> None:
+            while (number := os.read(hear, 1)[0]) not in _ENDING:
+                pass  # the terminal was resized, or we were stopped and go on
+            with contextlib.suppress(RuntimeError):  # the loop has ended already
+                loop.call_soon_threadsafe(lambda: self.exit(return_code=128 + number))
+            _end_by_force(number, settings)
+
+        threading.Thread(target=listen, daemon=True).start()
 
 
 def _end_by_force(number: int, settings: list[object] | None) -> None:

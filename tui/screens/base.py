@@ -12,10 +12,10 @@ from textual.timer import Timer
 from textual.widget import Widget
 from textual.widgets import Static
 
-from stillroom.chem.data.clean import clean_text
 from stillroom.tui.formatting import celsius
 from stillroom.tui.session import Session
 from stillroom.tui.widgets.keys import KeyLine
+from stillroom.tui.widgets.printable import printable
 from stillroom.tui.widgets.prompt import Prompt
 
 if TYPE_CHECKING:
@@ -81,7 +81,7 @@ class WorkScreen(Screen[None]):
             (self.name_in_heading, "bold reverse"),
             (f" {celsius(self.session.temperature)} ", "bold"),
             " ",
-            (clean_text(self._message), "bold") if self._message else clean_text(self.heading()),
+            (printable(self._message), "bold") if self._message else printable(self.heading()),
             no_wrap=True,
             overflow="ellipsis",
         )

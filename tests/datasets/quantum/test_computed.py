@@ -15,6 +15,7 @@ sys.path.insert(0, str(QUANTUM))
 
 from cache import current, fingerprint, read_liquids  # noqa: E402
 from calibration import CHECKS, factor, pairs, summary  # noqa: E402
+from recommend import conformer_uncertainty  # noqa: E402
 from shape import length, surface  # noqa: E402
 
 RAW = {
@@ -129,6 +130,38 @@ def test_calibrated_errors_reach_what_the_method_is_known_for() -> None:
     assert 0.88 < every.factor["dipole", "PBE0/def2-SVPD"] < 1.0
     assert 0.95 < every.factor["polarizability", "D4"] < 1.1
     assert every.mae["ionization_energy", "IPEA1-xTB"] < 0.5
+
+
+def test_recommended_values_are_scaled_raw_values() -> None:
+    raw = read("raw/xtb.csv").set_index("id")
+    better = read("raw/pbe0_dipole.csv").set_index("id").dipole_D
+    column = {
+        "PBE0/def2-SVPD": better,
+        "GFN2-xTB": raw.dipole_D,
+        "D4": raw.polarizability_A3,
+        "IPEA1-xTB": raw.ionization_energy_eV,
+    }
+    table = read("computed.csv")
+    assert (table.uncertainty > 0).all()
+    assert set(table[table.method == "PBE0/def2-SVPD"].id) == set(better.index)
+    for row in table[table.quantity != "c6"].itertuples():
+        expected = row.factor * column[str(row.method)][row.id]
+        assert row.value == pytest.approx(expected, rel=2e-3, abs=2e-3), row.id
+
+
+def test_conformer_uncertainty_is_the_slope_of_the_mean() -> None:
+    """One conformer has none; for two, a finite difference in each energy gives the same."""
+    assert conformer_uncertainty([2.0], [1.0], 2.0) == 0
+
+    def mean(first: float, second: float) -> float:
+        weight = np.exp(-np.array([first, second]) / (8.314462618e-3 * 298.15))
+        return float(np.sqrt(weight @ np.array([1.0, 9.0]) / weight.sum()))
+
+    step = 1e-4
+    slopes = [(mean(step, 1) - mean(0, 1)) / step, (mean(0, 1 + step) - mean(0, 1)) / step]
+    weight = np.exp(-np.array([0, 1.0]) / (8.314462618e-3 * 298.15))
+    found = conformer_uncertainty([1.0, 3.0], list(weight), 0.5)
+    assert found == pytest.approx(0.5 * np.hypot(*slopes), rel=1e-3)
 
 
 def test_descriptors_agree_with_published_abraham_values() -> None:
