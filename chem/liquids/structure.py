@@ -8,10 +8,11 @@ from dataclasses import dataclass
 _GROUP = re.compile(r"([A-Z][a-z]?)(\d*)")
 
 VALENCE_ELECTRONS = {
-    "H": 1, "D": 1, "B": 3, "Al": 3, "Ti": 4, "C": 4, "Si": 4, "Ge": 4, "Sn": 4, "N": 5, "P": 5, "As": 5,
+    "H": 1, "D": 1, "B": 3, "Al": 3, "Ti": 4,
+    "C": 4, "Si": 4, "Ge": 4, "Sn": 4, "N": 5, "P": 5, "As": 5,
     "O": 6, "S": 6, "Se": 6, "F": 7, "Cl": 7, "Br": 7, "I": 7,
 }  # fmt: skip
-"""Electrons outside the noble-gas core (for Ge to I: outside the filled d shell too; for Ti 3d and 4s)."""
+"""Electrons outside the noble-gas core, for Ge to I outside the filled d shell too."""
 
 
 @dataclass(frozen=True, slots=True)
