@@ -1,1 +1,1 @@
-"""The shelf and the values on it: units, quantities, look-up, filters, the user's store."""
+"""Units, quantities, values with provenance, errors: what everything else is written in."""

@@ -28,6 +28,13 @@ _ALIASES = {
     "A3": "angstrom**3",
 }
 _MAX_TEXT = 80  # longer than any number with a unit; keeps hostile input away from the parser
+# Pint works out every power it reads, so `9**9**9` would hang the program: a power is one small
+# number, never on another power, and no other number than 1 stands in a unit.
+_POWER = re.compile(
+    r"(?:\*\*|\^)\s*(?:\(\s*[+-]?\d{1,2}(?:\.\d+|\s*/\s*\d)?\s*\)|[+-]?\d{0,2}(?:\.\d{1,3})?)(?![\w.])"
+)
+_RAISED = str.maketrans("⁰¹²³⁴⁵⁶⁷⁸⁹⁻", "0123456789-")
+_UNREADABLE = re.compile(r"\*\*|\^|@\s*@|(?<![\w.])(?!1\b)[\d.]|\(.*\(.*\(", re.DOTALL)
 
 
 @cache
@@ -55,9 +62,12 @@ def split_number(text: str, what: str, expected: str) -> tuple[float, str]:
 
 def convert(number: float, unit: str, target: str) -> float | None:
     """Convert with Pint; None if the units are unknown or do not belong to the same dimension."""
+    plain = re.sub("[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+", lambda m: "**" + m[0].translate(_RAISED), unit)
+    if _UNREADABLE.search(_POWER.sub("@", plain)):
+        return None
     ureg = registry()
     try:
-        return float(ureg.Quantity(number, unit).to(target).magnitude)
+        return float(ureg.Quantity(number, plain).to(target).magnitude)
     except Exception:  # Pint's parser lets many kinds of error through on arbitrary text
         return None
 
@@ -70,7 +80,7 @@ def parse_value(text: str, quantity: Quantity) -> float:
     Raises
     ------
     BadNumber
-        If the text is not a number.
+        If the text is not a number, or one too large for this machine in SI.
     UnitMismatch
         If the unit is unknown or of another kind.
 
@@ -85,6 +95,16 @@ def parse_value(text: str, quantity: Quantity) -> float:
     number, unit = split_number(
         text, what, f"a number with {expected}" if quantity.unit else expected
     )
+    si = _in_si(number, unit, quantity)
+    if si is None:
+        raise UnitMismatch(text, what, expected)
+    if not math.isfinite(si):
+        raise BadNumber(text, what, "a number this machine can hold")
+    return si
+
+
+def _in_si(number: float, unit: str, quantity: Quantity) -> float | None:
+    """Return the number in SI, None if the unit does not fit the quantity."""
     if unit in ("", quantity.unit, quantity.unit_label):
         return quantity.to_si(number)
     own = convert(number, unit, quantity.unit or "dimensionless")
@@ -94,7 +114,7 @@ def parse_value(text: str, quantity: Quantity) -> float:
         value = convert(number, unit, other)
         if value is not None:
             return value * factor
-    raise UnitMismatch(text, what, expected)
+    return None
 
 
 def parse_temperature(text: str | float) -> float:

@@ -23,8 +23,8 @@ class Magnitude(float):
 
     units: str
 
-    def __new__(cls, number: float, units: str) -> Magnitude:
-        """Make the number `number` in `units`."""
+    def __new__(cls, number: float, units: str = "") -> Magnitude:
+        """Make the number `number` in `units` (copying calls it with the number alone)."""
         self = super().__new__(cls, number)
         self.units = units
         return self
@@ -78,6 +78,8 @@ class Value:
         from stillroom.chem.data.units import convert
 
         q = self.definition
+        if unit in (q.unit, q.unit_label):
+            return Magnitude(self.number, unit)
         number = convert(self.number, q.unit or "dimensionless", unit)
         if number is not None:
             return Magnitude(number, unit)

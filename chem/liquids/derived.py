@@ -186,7 +186,17 @@ def _dispersion(now: Columns, electrons: Array) -> Column:
         london_c6(alpha.si, alpha.si, ionization.si, ionization.si),
         slater_kirkwood_c6(alpha.si, alpha.si, electrons, electrons),
     )
-    column.uncertainty[:] = np.hypot(column.uncertainty, model * column.si)
+    worked_out = np.isnan(now["c6"].si) & ~np.isnan(column.si)
+    spread = np.hypot(column.uncertainty, model * column.si)
+    column.uncertainty[worked_out] = spread[worked_out]
+    inputs = {
+        (True, True): "from polarizability, ionization_energy, valence electrons",
+        (False, True): "from polarizability, valence electrons",
+        (True, False): "from polarizability, ionization_energy",
+    }
+    for row in np.flatnonzero(worked_out):
+        known = bool(~np.isnan(ionization.si[row])), bool(~np.isnan(electrons[row]))
+        column.source[row] = inputs[known]
     return column
 
 

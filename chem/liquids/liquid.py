@@ -3,13 +3,18 @@
 from __future__ import annotations
 
 from collections.abc import Mapping
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 
 import numpy as np
 
 from stillroom.chem.data.clean import clean_text
 from stillroom.chem.data.constants import REFERENCE_TEMPERATURE
-from stillroom.chem.data.errors import MissingValue, OutsideRange, UnknownQuantity
+from stillroom.chem.data.errors import (
+    MissingValue,
+    OutsideRange,
+    UnitMismatch,
+    UnknownQuantity,
+)
 from stillroom.chem.data.quantities import QUANTITIES, near, quantity
 from stillroom.chem.data.units import parse_temperature, parse_value
 from stillroom.chem.data.values import Column, Columns, Value
@@ -48,8 +53,8 @@ class Liquid:
         Identity as far as known; the formula gives the valence electrons.
     structure : Structure
         Facts on hydrogen bonds and shape that the verdict uses.
-    temperature : float
-        K.
+    temperature : float or str
+        K, or a text with a unit.
     **quantities : str, float or Value
         Values by quantity name, as text with a unit (`dipole="1.85 D"`) or a number in the
         quantity's own unit. Kind `user` unless a `Value` says otherwise.
@@ -85,21 +90,21 @@ class Liquid:
         smiles: str = "",
         family: str = "",
         structure: Structure | None = None,
-        temperature: float = REFERENCE_TEMPERATURE,
+        temperature: float | str = REFERENCE_TEMPERATURE,
         **quantities: str | float | Value,
     ) -> None:
         label = clean_text(name)
         identity = Identity(
             id=label.lower().replace(" ", "-"),
             name=label,
-            cas=cas,
-            smiles=smiles,
-            formula=formula,
-            family=family,
+            cas=clean_text(cas),
+            smiles=clean_text(smiles),
+            formula=clean_text(formula),
+            family=clean_text(family),
             structure=structure or Structure(),
         )
         stored = {q: Column.of(_user_value(q, given)) for q, given in quantities.items()}
-        self._settle(identity, stored, temperature)
+        self._settle(identity, stored, parse_temperature(temperature))
 
     @classmethod
     def from_columns(cls, identity: Identity, stored: Columns, temperature: float) -> Liquid:
@@ -122,6 +127,21 @@ class Liquid:
         if kelvin == self.temperature:
             return self
         return Liquid.from_columns(self.identity, self.stored, kelvin)
+
+    def same_as(self, other: Liquid) -> bool:
+        """Return whether both are one liquid: the same identity and the same tabulated numbers."""
+        return self.identity == other.identity and (
+            self.stored is other.stored
+            or self.stored.keys() == other.stored.keys()
+            and all(
+                np.array_equal(mine, its, equal_nan=True)
+                for name, column in self.stored.items()
+                for mine, its in (
+                    (column.si, other.stored[name].si),
+                    (column.uncertainty, other.stored[name].uncertainty),
+                )
+            )
+        )
 
     def __getattr__(self, name: str) -> Value | None:
         if name in QUANTITIES:
@@ -172,16 +192,34 @@ class Liquid:
 
 
 def _user_value(name: str, given: str | float | Value) -> Value:
-    if isinstance(given, Value):
-        return given
     if name not in QUANTITIES:
         raise UnknownQuantity(name, near(name, QUANTITIES))
     q = quantity(name)
-    number = q.from_si(parse_value(given, q)) if isinstance(given, str) else float(given)
+    if isinstance(given, Value):
+        if given.quantity != name:
+            raise UnitMismatch(given.quantity, name.replace("_", " "), q.unit_label or "a number")
+        given = _in_own_unit(given)
+        number = given.number
+    else:
+        number = q.from_si(parse_value(given, q)) if isinstance(given, str) else float(given)
     if not q.low <= number <= q.high:
         raise OutsideRange(
             name.replace("_", " "),
             f"{number:g}",
             f"{q.low:g} to {q.high:g} {q.unit_label}".rstrip(),
         )
-    return Value(name, number, q.unit, "user", "user", 0.0)
+    return given if isinstance(given, Value) else Value(name, number, q.unit, "user", "user", 0.0)
+
+
+def _in_own_unit(given: Value) -> Value:
+    """Return the value with number and uncertainty in the unit of its quantity."""
+    q = given.definition
+    if given.unit in ("", q.unit):
+        return given
+
+    def own(number: float) -> float:
+        return q.from_si(parse_value(f"{number!r} {given.unit}", q))
+
+    number = own(given.number)
+    scale = own(given.number + 1) - number  # so that degF spreads shrink without their offset
+    return replace(given, number=number, unit=q.unit, uncertainty=given.uncertainty * scale)

@@ -208,7 +208,7 @@ def _uncertainty(
 
     A like pair has one set of inputs, so each moves both sides at once.
     """
-    same = a.identity == b.identity
+    same = a.same_as(b)
     sides = (a,) if same else (a, b)
     values: list[float] = []
     spreads: list[float] = []

@@ -10,7 +10,8 @@
 Text columns (`name`, `family`, `formula`, `cas`, `id`, `hazard`) take `=`, `!=` and `~` (contains);
 a synonym counts as a name.
 A comparison with a missing value is false, whatever the operator; `known(quantity)` asks whether
-there is one. The text is parsed here and never evaluated as Python.
+there is one, of a text column too: no `hazard` means not known here, never safe. The text is
+parsed here and never evaluated as Python.
 """
 
 from __future__ import annotations
@@ -175,9 +176,11 @@ class _Parser:
 
     def _known(self) -> Mask:
         self._expect("open", "'(' after known")
-        q = quantity(self._expect("word", "a quantity").text)
+        name = self._expect("word", "a quantity").text
         self._expect("close", "')'")
-        return ~np.isnan(self.table.numbers(q.name))
+        if name in TEXT_FIELDS:
+            return np.array([any(v) for v in self.table.texts(name)], dtype=bool)
+        return ~np.isnan(self.table.numbers(quantity(name).name))
 
     def _comparison(self) -> Mask:
         first = self._operand()
@@ -245,4 +248,6 @@ class _Parser:
         if operator not in ("=", "!="):
             raise BadExpression(self.expression, other[0].position, "= != or ~ for a text column")
         same = np.array([any(t.casefold() == wanted for t in v) for v in values], dtype=bool)
-        return same if operator == "=" else ~same
+        if operator == "=":
+            return same
+        return ~same & np.array([any(v) for v in values], dtype=bool)

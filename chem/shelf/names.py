@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import unicodedata
 from collections import defaultdict
 from collections.abc import Sequence
 
@@ -11,15 +12,24 @@ from stillroom.chem.data.quantities import near
 from stillroom.chem.liquids.liquid import Identity
 
 
+_IGNORED = dict.fromkeys(map(ord, " _-‐‑‒–—−"))  # spaces and every hyphen that gets pasted
+
+
 def fold(text: str) -> str:
     """Return `text` without the differences that do not tell liquids apart: case, spaces, hyphens.
+
+    Full-width and subscript characters count as plain ones.
 
     Examples
     --------
     >>> fold("N,N-Dimethyl Formamide") == fold("n,n-dimethylformamide")
     True
     """
-    return text.casefold().replace(" ", "").replace("-", "").replace("_", "").replace("‐", "")
+    return _plain(text).casefold().translate(_IGNORED)
+
+
+def _plain(text: str) -> str:
+    return text if text.isascii() else unicodedata.normalize("NFKC", text)
 
 
 class NameIndex:
@@ -57,7 +67,7 @@ class NameIndex:
             found = self._smiles.get(typed)
         if found is not None:
             return found
-        rows = self._formula.get(typed.casefold(), [])
+        rows = self._formula.get(_plain(typed).casefold(), [])
         if len(rows) == 1:
             return rows[0]
         if rows:

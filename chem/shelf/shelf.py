@@ -158,13 +158,14 @@ class Shelf:
 
     def order(self, name: str, *, descending: bool = False) -> NDArray[np.intp]:
         """Return rows sorted by a quantity or a text field; missing values last, ties by name."""
-        names = np.array([who.name for who in self.identities])
+        names = np.array([who.name.casefold() for who in self.identities])
         by_name = np.argsort(names, kind="stable")
         if name in filters.TEXT_FIELDS:
-            keys = np.array([" ".join(t[:1]).casefold() for t in self.texts(name)])[by_name]
-            order = np.argsort(keys, kind="stable")
-            return by_name[order[::-1] if descending else order]
-        numbers = self.column(name).si[by_name]
+            texts = np.array([" ".join(t[:1]).casefold() for t in self.texts(name)])
+            places = np.unique(texts, return_inverse=True)[1].astype(float)
+            numbers = np.where(texts == "", np.nan, places)[by_name]
+        else:
+            numbers = self.column(name).si[by_name]
         order = np.argsort(-numbers if descending else numbers, kind="stable")
         return by_name[order]  # NumPy sorts NaN last in both directions
 
@@ -180,7 +181,11 @@ class Shelf:
             return [(who.name, *who.synonyms) for who in self.identities]
         if name == "hazard":
             return [
-                tuple(f"{h.hazard} {h.detail}" for h in self.hazards.get(who.id, ()))
+                tuple(
+                    text
+                    for h in self.hazards.get(who.id, ())
+                    for text in (h.hazard, f"{h.hazard} {h.detail}")
+                )
                 for who in self.identities
             ]
         return [(getattr(who, name),) for who in self.identities]

@@ -58,6 +58,7 @@ class Record:
 
 Row = tuple[int, dict[str, str]]
 
+LIQUIDS = "liquids.csv"
 VALUES = "values.csv"
 
 
@@ -69,7 +70,7 @@ def shipped() -> Traversable:
 def fingerprint(folder: Traversable) -> str:
     """Return the first 12 hex digits of the SHA-256 of liquids and values together."""
     digest = hashlib.sha256()
-    for name in ("liquids.csv", "values.csv"):
+    for name in (LIQUIDS, VALUES):
         digest.update((folder / name).read_bytes())
     return digest.hexdigest()[:12]
 
@@ -87,23 +88,29 @@ def cells(
     """
     path = folder / name
     try:
-        text = path.read_text(encoding="utf-8")
+        text = path.read_text(encoding="utf-8-sig")  # spreadsheets put a byte order mark first
     except FileNotFoundError:
         raise BadFile(name, "not found") from None
     except (OSError, UnicodeDecodeError) as problem:
         raise BadFile(name, f"cannot be read ({problem})") from None
     reader = csv.reader(io.StringIO(text, newline=""))
-    header = next(reader, [])
+    try:
+        header = next(reader, [])
+    except csv.Error as problem:
+        raise BadFile(name, f"is not CSV ({problem})", row=1) from None
     missing = [c for c in needed if c not in header]
     if missing:
         raise BadFile(name, f"has no column {', '.join(missing)}", row=1)
 
     def checked() -> Iterator[tuple[int, list[str]]]:
         width = len(header)
-        for row in reader:
-            if len(row) != width:
-                raise BadFile(name, f"{len(row)} cells, expected {width}", row=reader.line_num)
-            yield reader.line_num, row
+        try:
+            for row in reader:
+                if len(row) != width:
+                    raise BadFile(name, f"{len(row)} cells, expected {width}", row=reader.line_num)
+                yield reader.line_num, row
+        except csv.Error as problem:
+            raise BadFile(name, f"is not CSV ({problem})", row=reader.line_num) from None
 
     return header, checked()
 
@@ -117,9 +124,16 @@ def rows(folder: Traversable, name: str, needed: tuple[str, ...]) -> Iterator[Ro
 
 def read_identities(folder: Traversable) -> list[Identity]:
     """Return who the liquids are, in file order."""
-    name = "liquids.csv"
+    name = LIQUIDS
     found = []
+    seen = set()
     for line, row in rows(folder, name, ("id", "name", "cas", "smiles", "formula", "family")):
+        for column in ("id", "name"):
+            if not clean_text(row[column]):
+                raise BadFile(name, "is empty", line, column)
+        if row["id"] in seen:
+            raise BadFile(name, f"'{row['id']}' is there twice", line, "id")
+        seen.add(row["id"])
         synonyms = tuple(clean_text(s) for s in row.get("synonyms", "").split("|") if s.strip())
         found.append(
             Identity(
@@ -144,14 +158,22 @@ def _structure(name: str, line: int, row: dict[str, str]) -> Structure:
 
     def count(column: str) -> int | None:
         value = number(column)
+        if value is not None and (value < 0 or value != int(value)):
+            raise BadFile(name, f"'{row[column]}' is not a count", line, column)
         return None if value is None else int(value)
 
+    def word(column: str, *allowed: str) -> str | None:
+        text = row.get(column, "")
+        if text and text not in allowed:
+            raise BadFile(name, f"'{text}', expected {', '.join(allowed)}", line, column)
+        return text or None
+
     group_dipole = number("group_dipole_rss_D")
-    dimer = row.get("vapour_dimer", "")
+    dimer = word("vapour_dimer", "yes", "no")
     return Structure(
-        hbond_donor=row.get("hbond_donor") or None,
-        hbond_acceptor=row.get("hbond_acceptor") or None,
-        vapour_dimer={"yes": True, "no": False}.get(dimer),
+        hbond_donor=word("hbond_donor", "none", "weak", "strong"),
+        hbond_acceptor=word("hbond_acceptor", "none", "weak", "strong"),
+        vapour_dimer=None if dimer is None else dimer == "yes",
         polar_groups=count("polar_groups"),
         group_dipole_rss=None if group_dipole is None else group_dipole * DEBYE,
         flexible_polar_bonds=count("flexible_polar_bonds"),
@@ -171,6 +193,9 @@ class Records(Mapping[str, Sequence[Record]]):
         self._rows: dict[str, list[tuple[int, list[str]]]] = {}
         key, self._preferred = header.index("id"), header.index("preferred")
         for line, row in rows:
+            if row[self._preferred] not in ("0", "1"):
+                told = f"'{row[self._preferred]}', expected 0 or 1"
+                raise BadFile(VALUES, told, line, "preferred")
             self._rows.setdefault(row[key], []).append((line, row))
 
     def __getitem__(self, key: str) -> Sequence[Record]:
@@ -183,10 +208,25 @@ class Records(Mapping[str, Sequence[Record]]):
         return len(self._rows)
 
     def preferred(self, key: str) -> Iterator[Value]:
-        """Yield the preferred values of a liquid."""
+        """Yield the preferred values of a liquid; raises `BadFile` if one is not believable."""
+        seen = set()
         for line, row in self._rows.get(key, ()):
-            if row[self._preferred] == "1":
-                yield self._record(line, row).value
+            if row[self._preferred] != "1":
+                continue
+            value = self._record(line, row).value
+            q = value.definition
+            if not q.low <= value.number <= q.high:
+                expected = f"{q.low:g} to {q.high:g} {q.unit_label}".rstrip()
+                told = f"{q.name} {value.number:g}, expected {expected}"
+                raise BadFile(VALUES, told, line, "value")
+            if q.name in seen:
+                raise BadFile(VALUES, f"a second preferred {q.name}", line, "preferred")
+            seen.add(q.name)
+            yield value
+
+    def line(self, key: str) -> int:
+        """Return the line of the first value of a liquid."""
+        return self._rows[key][0][0]
 
     def _record(self, line: int, row: list[str]) -> Record:
         return _record(line, dict(zip(self._header, row, strict=True)))
@@ -209,15 +249,18 @@ def _record(line: int, row: dict[str, str]) -> Record:
     if row["kind"] not in KINDS:
         raise BadFile(VALUES, f"kind '{row['kind']}', expected {', '.join(KINDS)}", line, "kind")
     temperature, spread = row["temperature_K"], row["uncertainty"]
+    for column, text in (("temperature_K", temperature), ("uncertainty", spread)):
+        if text.startswith("-"):
+            raise BadFile(VALUES, f"'{text}' is negative", line, column)
     value = Value(
         quantity=q.name,
         number=_number(row["value"], VALUES, line, "value"),
         unit=q.unit,
         kind=row["kind"],
-        source=row["source"],
+        source=clean_text(row["source"]),
         uncertainty=_number(spread, VALUES, line, "uncertainty") if spread else math.nan,
         temperature=_number(temperature, VALUES, line, "temperature_K") if temperature else None,
-        note=row["note"],
+        note=clean_text(row["note"], 1000),
     )
     return Record(value, row["preferred"] == "1")
 
@@ -225,6 +268,8 @@ def _record(line: int, row: dict[str, str]) -> Record:
 def preferred_columns(ids: Sequence[str], records: Records) -> Columns:
     """Return one column per quantity with the preferred value of each liquid, in `ids` order."""
     columns: Columns = {}
+    for key in records.keys() - set(ids):
+        raise BadFile(VALUES, f"no liquid '{key}' in {LIQUIDS}", records.line(key), "id")
     for place, key in enumerate(ids):
         for value in records.preferred(key):
             if value.quantity not in columns:
@@ -237,11 +282,11 @@ def read_sources(folder: Traversable) -> dict[str, Source]:
     """Return the citations by key."""
     return {
         row["key"]: Source(
-            row["key"],
+            clean_text(row["key"]),
             clean_text(row["citation"], 1000),
-            row["year"],
-            row["doi"],
-            row["isbn"],
+            clean_text(row["year"]),
+            clean_text(row["doi"]),
+            clean_text(row["isbn"]),
             clean_text(row["note"], 1000),
         )
         for _, row in rows(
@@ -254,7 +299,9 @@ def read_hazards(folder: Traversable) -> dict[str, list[Hazard]]:
     """Return the known dangers by liquid id."""
     found: dict[str, list[Hazard]] = {}
     for _, row in rows(folder, "hazards.csv", ("id", "hazard", "detail", "source")):
-        hazard = Hazard(row["hazard"], clean_text(row["detail"]), row["source"])
+        hazard = Hazard(
+            clean_text(row["hazard"]), clean_text(row["detail"]), clean_text(row["source"])
+        )
         found.setdefault(row["id"], []).append(hazard)
     return found
 
