@@ -46,7 +46,7 @@ SIGNIFICANT = {
     "exposure_limit": 3,
     "water_solubility": 3,
 }
-"""Significant digits written; temperatures in degC and log P are written to two decimals instead."""
+"""Significant digits written; temperatures in degC and log P have two decimals instead."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -12,8 +12,8 @@ from steps.exposure import exposure_limits
 from steps.liquid import Liquid
 from steps.optics import polarizability, refractive_indices
 from steps.outliers import set_aside, too_far
-from steps.phase import boiling_points, critical_temperatures, melting_points
 from steps.partition import partitions
+from steps.phase import boiling_points, critical_temperatures, melting_points
 from steps.prefer import choose
 from steps.safety import autoignition_temperatures, flammability_limits, flash_points
 from steps.transport import surface_tensions, viscosities

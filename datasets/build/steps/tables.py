@@ -7,6 +7,7 @@ from __future__ import annotations
 
 import csv
 import gzip
+import io
 import json
 from functools import cache
 from importlib.metadata import version
@@ -78,10 +79,10 @@ def table(name: str) -> dict[str, list[dict[str, str]]]:
     """Return rows of a raw table by CAS number (a substance may have several rows)."""
     path = Path(chemicals.__file__).parent / TABLES[name]
     rows: dict[str, list[dict[str, str]]] = {}
-    opened = gzip.open(path, "rt", encoding="utf-8", newline="") if path.suffix == ".gz" else None
-    with opened or path.open(encoding="utf-8", newline="") as file:
-        for row in csv.DictReader(file, delimiter="\t"):
-            rows.setdefault(_hyphenated(row["CAS"]), []).append(row)
+    content = path.read_bytes()
+    text = (gzip.decompress(content) if path.suffix == ".gz" else content).decode("utf-8")
+    for row in csv.DictReader(io.StringIO(text, newline=""), delimiter="\t"):
+        rows.setdefault(_hyphenated(row["CAS"]), []).append(row)
     return rows
 
 
