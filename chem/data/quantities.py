@@ -79,6 +79,7 @@ _PRINTED = {
     "kJ_mol": "kJ/mol",
     "mPa_s": "mPa s",
     "mN_m": "mN/m",
+    "percent": "%",
     "MPa0.5": "MPa½",
 }
 
@@ -102,6 +103,9 @@ _ALL = (
     Quantity(
         "c6", "dispersion C6 of the like pair", "C6", "1e-79*joule*meter**6", "1e-79_J_m6", 1e-79,
         0.1, 1e5, 1, also=(("joule*meter**6", 1.0),), derived=True,
+    ),
+    Quantity(
+        "valence_electrons", "valence electrons", "Nval", "", "", 1.0, 1.0, 2000.0, 0, derived=True,
     ),
     Quantity("molar_mass", "molar mass", "M", "g/mol", "g_mol", 1e-3, 1.0, 2000.0, 2),
     Quantity("density", "density", "density", "kg/m**3", "kg_m3", 1.0, 300.0, 5000.0, 1),
@@ -133,6 +137,27 @@ _ALL = (
     Quantity(
         "flash_point", "flash point", "flash", "degC", "degC", 1.0, -100.0, 350.0, 0,
         offset=ZERO_CELSIUS,
+    ),
+    Quantity(
+        "autoignition_temperature", "autoignition temperature", "autoign", "degC", "degC", 1.0,
+        50.0, 800.0, 0, offset=ZERO_CELSIUS,
+    ),
+    Quantity(
+        "lower_flammability_limit", "lower flammability limit in air", "LFL", "percent", "percent",
+        0.01, 0.1, 50.0, 2,
+    ),
+    Quantity(
+        "upper_flammability_limit", "upper flammability limit in air", "UFL", "percent", "percent",
+        0.01, 1.0, 100.0, 1,
+    ),
+    Quantity(
+        "exposure_limit", "exposure limit (8 h average, vapour)", "TWA", "ppm", "ppm", 1e-6,
+        1e-5, 5000.0, 3,
+    ),
+    Quantity("log_p", "octanol-water partition, log P", "logP", "", "", 1.0, -5.0, 20.0, 2),
+    Quantity(
+        "water_solubility", "solubility in water (by mass)", "w(aq)", "percent", "percent",
+        0.01, 0.0, 100.0, 3,
     ),
     Quantity(
         "cohesive_energy", "cohesive energy", "Ecoh", "kJ/mol", "kJ_mol", 1e3, 1.0, 250.0, 2,

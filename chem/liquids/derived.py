@@ -83,6 +83,7 @@ def state(stored: Columns, electrons: Array, temperature: float) -> Columns:
         ("permittivity", "refractive_index", "molar_volume", "dipole"),
     )
     now["c6"] = _dispersion(now, electrons)
+    now["valence_electrons"] = _counted(now["valence_electrons"], electrons)
     return now
 
 
@@ -198,6 +199,20 @@ def _dispersion(now: Columns, electrons: Array) -> Column:
         known = bool(~np.isnan(ionization.si[row])), bool(~np.isnan(electrons[row]))
         column.source[row] = inputs[known]
     return column
+
+
+def _counted(column: Column, electrons: Array) -> Column:
+    """Return the column of valence electrons, exact numbers that follow from the formula."""
+    known = ~np.isnan(electrons)
+    return Column(
+        column.quantity,
+        electrons,
+        np.where(known, 0.0, np.nan),
+        column.temperature,
+        np.where(known, "derived", ""),
+        np.where(known, "from formula", ""),
+        np.where(known, "", "no formula"),
+    )
 
 
 def _weakest(inputs: list[Column]) -> Words:

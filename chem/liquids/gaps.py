@@ -18,6 +18,8 @@ DISABLES = {
     "permittivity": "no Kirkwood factor, so association goes unnoticed",
     "refractive_index": "no Kirkwood factor, so association goes unnoticed",
     "flash_point": "flammability is not known here",
+    "lower_flammability_limit": "which vapour concentration can burn is not known here",
+    "exposure_limit": "no limit known here, which does not mean that none is set",
 }
 
 

@@ -15,6 +15,8 @@ from pathlib import Path
 
 sys.path.insert(0, str(Path(__file__).resolve().parent))
 
+from steps.audit import write_audit
+from steps.candidate import Candidate
 from steps.collect import collect
 from steps.curated import read_decisions
 from steps.expansion import fit_expansion
@@ -41,7 +43,15 @@ VALUES = (
     "preferred",
     "note",
 )
-FILES = ("liquids.csv", "values.csv", "sources.csv", "hazards.csv", "shelf.csv", "datapackage.json")
+FILES = (
+    "liquids.csv",
+    "values.csv",
+    "sources.csv",
+    "hazards.csv",
+    "shelf.csv",
+    "datapackage.json",
+    "AUDIT.md",
+)
 
 
 def main(arguments: list[str] | None = None) -> int:
@@ -73,9 +83,11 @@ def build(target: Path) -> str:
     liquids = [liquid_of(c, structures[c.cas]["formula"], decisions) for c in selection]
     expansion = fit_expansion(liquids)
     identity, values, hazards, shelf = [], [], [], []
+    collected: dict[str, list[Candidate]] = {}
     for chosen, liquid in zip(selection, liquids, strict=True):
         row = structures[liquid.cas]
         found = collect(liquid, decisions, expansion)
+        collected[liquid.id] = found
         identity.append(
             [
                 liquid.id,
@@ -100,6 +112,8 @@ def build(target: Path) -> str:
     header, sources = used_sources(CURATED / "sources.csv", keys)
     write_csv(target / "sources.csv", header, sources)
     write_package(target)
+    donors = {c.id for c in selection if structures[c.cas]["hbond_donor"] == "strong"}
+    write_audit(target / "AUDIT.md", collected, donors, decisions, CURATED)
     return (
         f"{len(identity)} liquids, {len(values)} values, {len(sources)} sources; thermal expansion"
         f" {expansion.a:.3e} + {expansion.b:.4f}/Tb per K, scatter {expansion.scatter:.1e},"

@@ -22,6 +22,12 @@ BOUNDS = {
     "viscosity": (0.15, 1500.0),
     "surface_tension": (9.0, 75.0),
     "flash_point": (-60.0, 260.0),
+    "autoignition_temperature": (20.0, 680.0),
+    "lower_flammability_limit": (0.25, 20.0),
+    "upper_flammability_limit": (2.0, 100.0),
+    "exposure_limit": (0.003, 1500.0),
+    "log_p": (-2.5, 20.0),
+    "water_solubility": (0.00005, 100.0),
 }
 
 

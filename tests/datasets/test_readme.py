@@ -25,7 +25,7 @@ def test_counts_of_liquids_melts_and_complete_rows(
 def test_coverage_table(values: pd.DataFrame) -> None:
     used = values[values.preferred == 1]
     rows = re.findall(r"^\| (\w+) \| (\d+) \| (\d+) \| (\d+) \| (\d+) \| (\d+) \|$", TEXT, re.M)
-    assert len(rows) == 14
+    assert len(rows) == 20
     for quantity, *numbers in rows:
         of_it = used[used.quantity == quantity]
         kinds = [int((of_it.kind == k).sum()) for k in ("measured", "derived", "estimated")]

@@ -39,7 +39,13 @@ LATER = """
 gamma-valerolactone; limonene; alpha-pinene; 1,8-cineole; cyclopentyl methyl ether;
 dihydrolevoglucosenone; dimethyl isosorbide; ethyl lactate; 1,2-butylene carbonate;
 glycerol carbonate; octamethylcyclotetrasiloxane; decamethylcyclopentasiloxane;
-1-methoxy-2-propyl acetate; 1-methoxy-2-propanol; ethyl methyl carbonate; fluoroethylene carbonate
+1-methoxy-2-propyl acetate; 1-methoxy-2-propanol; ethyl methyl carbonate; fluoroethylene carbonate;
+N-butyl-2-pyrrolidone; 2,2,5,5-tetramethyltetrahydrofuran; 3-methoxy-3-methyl-1-butanol;
+methyl levulinate; diisopentyl ether; dipropylene glycol monomethyl ether; dipropyl carbonate;
+diisononyl phthalate; diisononyl cyclohexane-1,2-dicarboxylate; bis(2-ethylhexyl) terephthalate;
+tris(2-ethylhexyl) trimellitate; benzyl butyl phthalate; dibutyl adipate; dibutyl sebacate;
+bis(2-ethylhexyl) hydrogen phosphate; trioctylamine; tris(2-ethylhexyl) phosphate;
+triisobutyl phosphate; gamma-decalactone
 """
 
 SERIES = {
@@ -51,20 +57,34 @@ SERIES = {
         "methanol ethanol 1-propanol 1-butanol 1-pentanol 1-hexanol 1-heptanol 1-octanol "
         "1-nonanol 1-decanol 1-undecanol 1-dodecanol"
     ),
-    "methyl ketones": "acetone 2-butanone 2-pentanone 2-hexanone 2-heptanone 2-octanone 2-nonanone",
+    "methyl ketones": "acetone 2-butanone 2-pentanone 2-hexanone 2-heptanone 2-octanone 2-nonanone "
+    "2-decanone 2-undecanone",
     "n-nitriles": (
         "acetonitrile propionitrile butyronitrile valeronitrile hexanenitrile heptanenitrile "
-        "octanenitrile"
+        "octanenitrile nonanenitrile decanenitrile"
     ),
     "carboxylic acids": (
         "formic-acid acetic-acid propionic-acid butyric-acid valeric-acid hexanoic-acid "
         "heptanoic-acid octanoic-acid nonanoic-acid"
     ),
     "1-chloroalkanes": (
-        "1-chloropropane 1-chlorobutane 1-chloropentane 1-chlorohexane 1-chloroheptane"
+        "1-chloropropane 1-chlorobutane 1-chloropentane 1-chlorohexane 1-chloroheptane "
+        "1-chlorooctane 1-chlorononane 1-chlorodecane 1-chloroundecane 1-chlorododecane"
     ),
-    "primary amines": "propylamine butylamine pentylamine hexylamine heptylamine octylamine",
-    "dialkyl ethers": "diethyl-ether dipropyl-ether dibutyl-ether dipentyl-ether dihexyl-ether",
+    "primary amines": (
+        "propylamine butylamine pentylamine hexylamine heptylamine octylamine nonylamine "
+        "decylamine undecylamine"
+    ),
+    "ethyl esters": (
+        "ethyl-formate ethyl-acetate ethyl-propionate ethyl-butyrate ethyl-valerate "
+        "ethyl-hexanoate ethyl-heptanoate ethyl-octanoate ethyl-nonanoate ethyl-decanoate"
+    ),
+    "n-alkylbenzenes": (
+        "toluene ethylbenzene propylbenzene butylbenzene pentylbenzene hexylbenzene "
+        "heptylbenzene octylbenzene nonylbenzene decylbenzene undecylbenzene dodecylbenzene"
+    ),
+    "dialkyl ethers": "diethyl-ether dipropyl-ether dibutyl-ether dipentyl-ether dihexyl-ether "
+    "diheptyl-ether dioctyl-ether",
 }
 
 

@@ -11,7 +11,7 @@ from stillroom.chem.data.quantities import QUANTITIES
 from stillroom.chem.liquids.gaps import gaps
 from stillroom.chem.liquids.liquid import Liquid
 from stillroom.chem.pairs.pair import PairInteraction, interact
-from stillroom.chem.shelf.cautions import caution_line
+from stillroom.chem.shelf.cautions import caution_line, limits_line
 from stillroom.chem.shelf.shelf import Shelf
 from stillroom.tui.commands.common import (
     add_beyond_range,
@@ -94,6 +94,7 @@ def sheet_record(shelf: Shelf, liquid: Liquid, *, every: bool = False) -> dict[s
             for h in shelf.hazards.get(who.id, ())
         ],
         "caution": caution_line(shelf.hazards.get(who.id, ())),
+        "limits": limits_line(liquid),
     }
     if every:
         record["tabulated"] = [
@@ -152,6 +153,9 @@ def sheet_lines(shelf: Shelf, liquid: Liquid, *, every: bool = False) -> Iterato
         )  # fmt: skip
     yield ""
     yield caution_line(shelf.hazards.get(who.id, ()))
+    limits = limits_line(liquid)
+    if limits:
+        yield limits
 
 
 def like_lines(liquid: Liquid) -> Iterator[str]:

@@ -14,7 +14,7 @@ from stillroom.chem.data.quantities import QUANTITIES
 from stillroom.chem.data.values import Value
 from stillroom.chem.liquids.gaps import gaps
 from stillroom.chem.liquids.liquid import Liquid
-from stillroom.chem.shelf.cautions import caution_line
+from stillroom.chem.shelf.cautions import caution_line, limits_line
 from stillroom.chem.shelf.shelf import Shelf
 from stillroom.tui.formatting import celsius, quantity_words, with_uncertainty
 from stillroom.tui.screens.base import WorkScreen
@@ -106,6 +106,9 @@ class SheetScreen(WorkScreen):
         liquid, width = self.liquid, self.size.width - 2
         hazards = self.session.shelf.hazards.get(liquid.id, ())
         lines = [*like_summary(liquid, width), caution_line(hazards)]
+        limits = limits_line(liquid)
+        if limits:
+            lines.append(limits)
         outside = liquid.outside_liquid_range()
         if outside:
             lines.insert(0, f"not a liquid at this temperature and 1 atm: {outside}")

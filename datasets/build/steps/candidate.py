@@ -20,6 +20,12 @@ UNITS = {
     "viscosity": "mPa*s",
     "surface_tension": "mN/m",
     "flash_point": "degC",
+    "autoignition_temperature": "degC",
+    "lower_flammability_limit": "percent",
+    "upper_flammability_limit": "percent",
+    "exposure_limit": "ppm",
+    "log_p": "1",
+    "water_solubility": "percent",
 }
 """Quantities in the order of the wide table, with the unit each is stored in."""
 
@@ -35,8 +41,12 @@ SIGNIFICANT = {
     "refractive_index": 5,
     "viscosity": 4,
     "surface_tension": 4,
+    "lower_flammability_limit": 3,
+    "upper_flammability_limit": 3,
+    "exposure_limit": 3,
+    "water_solubility": 3,
 }
-"""Significant digits written; temperatures in degC are written to two decimals instead."""
+"""Significant digits written; temperatures in degC and log P have two decimals instead."""
 
 
 @dataclass(frozen=True, slots=True)

@@ -8,12 +8,14 @@ from steps.density import densities
 from steps.dielectric import permittivities
 from steps.dipole import dipoles
 from steps.expansion import Expansion
+from steps.exposure import exposure_limits
 from steps.liquid import Liquid
 from steps.optics import polarizability, refractive_indices
 from steps.outliers import set_aside, too_far
+from steps.partition import partitions
 from steps.phase import boiling_points, critical_temperatures, melting_points
 from steps.prefer import choose
-from steps.safety import flash_points
+from steps.safety import autoignition_temperatures, flammability_limits, flash_points
 from steps.transport import surface_tensions, viscosities
 from steps.vaporization import vapor_pressures, vaporization_enthalpies
 from steps.water import water_values
@@ -45,6 +47,11 @@ def collect(liquid: Liquid, decisions: list[Decision], expansion: Expansion) -> 
         "viscosity": viscosities(liquid),
         "surface_tension": surface_tensions(liquid),
         "flash_point": flash_points(liquid),
+        "autoignition_temperature": autoignition_temperatures(liquid),
+        "lower_flammability_limit": flammability_limits(liquid, "lower_flammability_limit"),
+        "upper_flammability_limit": flammability_limits(liquid, "upper_flammability_limit"),
+        "exposure_limit": exposure_limits(liquid),
+        "log_p": partitions(liquid),
     }
     for candidate in water_values(liquid):
         tabled[candidate.quantity].append(candidate)

@@ -9,6 +9,7 @@ import csv
 from pathlib import Path
 
 from steps.candidate import Candidate
+from steps.exposure import SOURCE, absorbed_through_skin
 from steps.liquid import Liquid
 from steps.tables import rows
 
@@ -17,6 +18,7 @@ HAZARDS = (
     "flammable",
     "carcinogen",
     "toxic",
+    "absorbed through the skin",
     "reproductive toxicant",
     "organ toxicant",
     "sensitizer",
@@ -48,7 +50,7 @@ def hazard_rows(
     liquid: Liquid, values: list[Candidate], curated: list[dict[str, str]]
 ) -> list[list[str]]:
     """Return id, hazard, detail, source for one liquid in the order of `HAZARDS`."""
-    found = [*_fire(liquid, values), *_cancer(liquid)]
+    found = [*_fire(liquid, values), *_cancer(liquid), *_skin(liquid)]
     found += [
         [r["id"], r["hazard"], r["detail"], r["source"]] for r in curated if r["id"] == liquid.id
     ]
@@ -64,6 +66,13 @@ def _fire(liquid: Liquid, values: list[Candidate]) -> list[list[str]]:
     return [[liquid.id, hazard, f"flash point {flash.value:.0f} degC", flash.source]]
 
 
+def _skin(liquid: Liquid) -> list[list[str]]:
+    """Skin notation of the table of exposure limits."""
+    if not absorbed_through_skin(liquid):
+        return []
+    return [[liquid.id, "absorbed through the skin", "skin notation, Ontario", SOURCE]]
+
+
 def _cancer(liquid: Liquid) -> list[list[str]]:
     """Classes of the IARC and NTP tables."""
     found = []
@@ -72,6 +81,6 @@ def _cancer(liquid: Liquid) -> list[list[str]]:
             detail = f"IARC {_IARC[row['group']]}, volume year {row['year']}"
             found.append([liquid.id, "carcinogen", detail, "iarc-monographs"])
     for row in rows("ntp", liquid.cas)[:1]:
-        detail = f"NTP: {_NTP[row['Listing']]} to be a human carcinogen"
+        detail = f"NTP: {_NTP[row['Listing']]} to be a human carcinogen (13th report, 2014)"
         found.append([liquid.id, "carcinogen", detail, "ntp-report-on-carcinogens"])
     return found

@@ -11,12 +11,13 @@ from statistics import median
 
 from steps.candidate import Candidate
 
-# Limits: kelvin where the first item is given, else a fraction of the median.
+# Limits: in the unit of the quantity where the first item is given, else a fraction of the median.
 LIMITS: dict[str, tuple[float | None, float]] = {
     "melting_point": (10.0, 0.0),
     "boiling_point": (6.0, 0.0),
     "critical_temperature": (12.0, 0.0),
     "flash_point": (15.0, 0.0),
+    "log_p": (0.6, 0.0),
     "density": (None, 0.02),
     "vaporization_enthalpy": (None, 0.08),
     "vapor_pressure": (None, 0.30),
@@ -55,12 +56,12 @@ def set_aside(candidates: list[Candidate]) -> list[Candidate]:
     """Return the candidates of one quantity with lonely ones marked as rejected."""
     if not candidates or candidates[0].quantity not in LIMITS:
         return candidates
-    kelvin, fraction = LIMITS[candidates[0].quantity]
+    fixed, fraction = LIMITS[candidates[0].quantity]
     voters = [c for c in candidates if _votes(c, candidates)]
     if len(voters) < 3:
         return candidates
     middle = median(c.value for c in voters)
-    limit = kelvin if kelvin is not None else fraction * abs(middle)
+    limit = fixed if fixed is not None else fraction * abs(middle)
     near = [c for c in voters if abs(c.value - middle) <= limit]
     if len(near) < 2:
         return candidates

@@ -3,7 +3,9 @@
 Order: a value chosen by hand in the curated files; then measured before estimated, tables before
 memory; then the one nearest the wanted temperature; among those the first in the order of sources
 below. Of three or more densities or viscosities at one temperature the one nearest their median
-is preferred instead.
+is preferred instead. Of several flammability limits or autoignition temperatures the most cautious
+is preferred: lowest lower limit, highest upper limit, lowest autoignition temperature. They depend
+on vessel and criterion, and two of the three tables share origins, so a majority proves nothing.
 
 The standard uncertainty of the preferred value is the source's own, combined in quadrature with
 the spread of all accepted values at that temperature: 1.48 times the median distance from the
@@ -51,6 +53,8 @@ ORDER = (
     "poling-2001",
     "nist-webbook",
     "open-melting-point-2014",
+    "crc-2014-logp",
+    "syrres-2006-logp",
     "iec-60079-20-1-2010",
     "nfpa-497-2008",
     "serat-2017",
@@ -59,12 +63,21 @@ ORDER = (
 )
 
 
+CAUTIOUS = {
+    "autoignition_temperature": 1.0,
+    "lower_flammability_limit": 1.0,
+    "upper_flammability_limit": -1.0,
+}
+"""Quantities of which the most cautious value is preferred; the sign by which to sort them."""
+
+
 def choose(candidates: list[Candidate], wanted: float) -> list[Candidate]:
     """Return the candidates in a fixed order with one preferred (none if all are rejected)."""
     accepted = [c for c in candidates if not c.rejected]
     if not accepted:
         return _sorted(candidates, wanted)
-    best = _median_of_equals(accepted, min(accepted, key=lambda c: _rank(c, wanted)))
+    best = min(accepted, key=lambda c: _rank(c, wanted))
+    best = _most_cautious(accepted, _median_of_equals(accepted, best), wanted)
     distances = [
         abs(c.value - best.value)
         for c in accepted
@@ -86,6 +99,14 @@ def _median_of_equals(accepted: list[Candidate], best: Candidate) -> Candidate:
         return best
     middle = median(c.value for c in equals)
     return min(equals, key=lambda c: (abs(c.value - middle), c.source))
+
+
+def _most_cautious(accepted: list[Candidate], best: Candidate, wanted: float) -> Candidate:
+    """Of fire data the most cautious value; other quantities keep `best`."""
+    sign = CAUTIOUS.get(best.quantity)
+    if sign is None or best.chosen_by_hand:
+        return best
+    return min(accepted, key=lambda c: (sign * c.value, _rank(c, wanted)))
 
 
 def _rank(candidate: Candidate, wanted: float) -> tuple[bool, bool, bool, float, int, str]:

@@ -21,6 +21,12 @@ COLUMNS = {
     "viscosity": "viscosity_mPa_s",
     "surface_tension": "surface_tension_mN_m",
     "flash_point": "flash_point_degC",
+    "autoignition_temperature": "autoignition_temperature_degC",
+    "lower_flammability_limit": "lower_flammability_limit_percent",
+    "upper_flammability_limit": "upper_flammability_limit_percent",
+    "exposure_limit": "exposure_limit_ppm",
+    "log_p": "log_p",
+    "water_solubility": "water_solubility_percent",
 }
 IDENTITY = ("name", "cas", "smiles", "formula", "family")
 

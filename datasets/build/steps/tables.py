@@ -6,9 +6,13 @@ Only the files named in `TABLES` are read; those with computed or predicted valu
 from __future__ import annotations
 
 import csv
+import gzip
+import io
+import json
 from functools import cache
 from importlib.metadata import version
 from pathlib import Path
+from typing import Any
 
 import chemicals
 
@@ -55,6 +59,9 @@ TABLES = {
     "flash_dippr": "Safety/DIPPR T_flash Serat.csv",
     "flash_nfpa": "Safety/NFPA 497 2008.tsv",
     "flash_iec": "Safety/IS IEC 60079-20-1 2010.tsv",
+    "exposure": "Safety/Ontario Exposure Limits.json",
+    "logp_crc": "Environment/CRC logP table.tsv",
+    "logp_syrres": "Environment/Syrres logP data.csv.gz",
     "iarc": "Safety/IARC Carcinogen Database.tsv",
     "ntp": "Safety/National Toxicology Program Carcinogens.tsv",
 }
@@ -72,10 +79,19 @@ def table(name: str) -> dict[str, list[dict[str, str]]]:
     """Return rows of a raw table by CAS number (a substance may have several rows)."""
     path = Path(chemicals.__file__).parent / TABLES[name]
     rows: dict[str, list[dict[str, str]]] = {}
-    with path.open(encoding="utf-8", newline="") as file:
-        for row in csv.DictReader(file, delimiter="\t"):
-            rows.setdefault(_hyphenated(row["CAS"]), []).append(row)
+    content = path.read_bytes()
+    text = (gzip.decompress(content) if path.suffix == ".gz" else content).decode("utf-8")
+    for row in csv.DictReader(io.StringIO(text, newline=""), delimiter="\t"):
+        rows.setdefault(_hyphenated(row["CAS"]), []).append(row)
     return rows
+
+
+@cache
+def exposure_table() -> dict[str, dict[str, Any]]:
+    """Return the table of occupational exposure limits by CAS number."""
+    path = Path(chemicals.__file__).parent / TABLES["exposure"]
+    found: dict[str, dict[str, Any]] = json.loads(path.read_text(encoding="utf-8"))
+    return found
 
 
 @cache
