@@ -140,7 +140,7 @@ _ALL = (
     ),
     Quantity(
         "autoignition_temperature", "autoignition temperature", "autoign", "degC", "degC", 1.0,
-        50.0, 800.0, 0, offset=ZERO_CELSIUS,
+        0.0, 800.0, 0, offset=ZERO_CELSIUS,
     ),
     Quantity(
         "lower_flammability_limit", "lower flammability limit in air", "LFL", "percent", "percent",

@@ -132,13 +132,15 @@ class Liquid:
         """Return whether both are one liquid: the same identity and the same tabulated numbers."""
         return self.identity == other.identity and (
             self.stored is other.stored
-            or self.stored.keys() == other.stored.keys()
-            and all(
-                np.array_equal(mine, its, equal_nan=True)
-                for name, column in self.stored.items()
-                for mine, its in (
-                    (column.si, other.stored[name].si),
-                    (column.uncertainty, other.stored[name].uncertainty),
+            or (
+                self.stored.keys() == other.stored.keys()
+                and all(
+                    np.array_equal(mine, its, equal_nan=True)
+                    for name, column in self.stored.items()
+                    for mine, its in (
+                        (column.si, other.stored[name].si),
+                        (column.uncertainty, other.stored[name].uncertainty),
+                    )
                 )
             )
         )

@@ -250,4 +250,4 @@ class _Parser:
         same = np.array([any(t.casefold() == wanted for t in v) for v in values], dtype=bool)
         if operator == "=":
             return same
-        return ~same & np.array([any(v) for v in values], dtype=bool)
+        return np.asarray(~same & np.array([any(v) for v in values], dtype=bool))

@@ -11,7 +11,6 @@ from stillroom.chem.data.errors import AmbiguousLiquid, UnknownLiquid
 from stillroom.chem.data.quantities import near
 from stillroom.chem.liquids.liquid import Identity
 
-
 _IGNORED = dict.fromkeys(map(ord, " _-‐‑‒–—−"))  # spaces and every hyphen that gets pasted
 
 

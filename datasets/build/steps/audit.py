@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections import Counter
+from collections.abc import Sequence
 from dataclasses import dataclass
 from pathlib import Path
 from statistics import median
@@ -252,7 +253,7 @@ def _least_trusted(everything: list[Candidate]) -> list[str]:
     ]
 
 
-def _table(header: list[str], rows: list[list[object]]) -> list[str]:
+def _table(header: Sequence[str], rows: Sequence[Sequence[object]]) -> list[str]:
     """A Markdown table."""
     lines = ["| " + " | ".join(header) + " |", "|" + "---|" * len(header)]
     return lines + ["| " + " | ".join(str(cell) for cell in row) + " |" for row in rows]
