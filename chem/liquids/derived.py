@@ -25,6 +25,10 @@ from stillroom.chem.liquids.cohesion import cohesive_energy, solubility_paramete
 from stillroom.chem.liquids.temperature import (
     GULDBERG,
     NEAR,
+    RACKETT_ERROR,
+    RACKETT_GUESS_ERROR,
+    WATSON_ERROR,
+    WATSON_GUESS_ERROR,
     rackett_density_ratio,
     watson_ratio,
 )
@@ -34,8 +38,6 @@ Words = NDArray[np.object_]
 
 _WEAKNESS = ("measured", "user", "derived", "computed", "estimated")
 _TABULATED = ("vapor_pressure", "permittivity", "refractive_index", "viscosity", "surface_tension")
-_RULE_ERROR = 0.1  # of the change between the two temperatures: our allowance for either rule
-_GUESS_ERROR = 0.3  # the same where the critical temperature is Guldberg's
 _BRIEF = 10.0  # K: a rule used over a shorter span keeps the kind of a derived number
 
 
@@ -64,9 +66,13 @@ def state(stored: Columns, electrons: Array, temperature: float) -> Columns:
     critical = now["critical_temperature"].si
     guessed = np.isnan(critical)
     critical = np.where(guessed, GULDBERG * now["boiling_point"].si, critical)
-    now["density"] = _carried(now["density"], temperature, critical, guessed, rackett_density_ratio)
+    rackett_error = np.where(guessed, RACKETT_GUESS_ERROR, RACKETT_ERROR)
+    now["density"] = _carried(
+        now["density"], temperature, critical, guessed, rackett_density_ratio, rackett_error
+    )
+    watson_error = np.where(guessed, WATSON_GUESS_ERROR, WATSON_ERROR)
     now["vaporization_enthalpy"] = _carried(
-        now["vaporization_enthalpy"], temperature, critical, guessed, watson_ratio
+        now["vaporization_enthalpy"], temperature, critical, guessed, watson_ratio, watson_error
     )
     for name in _TABULATED:
         now[name] = _kept_if_near(now[name], temperature)
@@ -93,6 +99,7 @@ def _carried(
     critical: Array,
     guessed: NDArray[np.bool_],
     rule: Callable[..., Array],
+    error: Array,
 ) -> Column:
     """Carry a column to `temperature` by a ratio rule; missing where the rule cannot be used."""
     shift = temperature - column.temperature
@@ -115,7 +122,7 @@ def _carried(
     return Column(
         column.quantity,
         column.si * ratio,
-        np.hypot(column.uncertainty * ratio, np.where(guessed, _GUESS_ERROR, _RULE_ERROR) * moved),
+        np.hypot(column.uncertainty * ratio, error * moved),
         np.where(np.isnan(column.temperature), np.nan, temperature),
         kind,
         column.source,

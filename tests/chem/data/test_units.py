@@ -37,6 +37,8 @@ SI = {
 def si_unit(q: Quantity) -> str:
     if q.unit == "degC":
         return "kelvin"
+    if q.unit in ("percent", "ppm"):
+        return "dimensionless"
     return SI.get(q.name, q.unit or "dimensionless")
 
 
