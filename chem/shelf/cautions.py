@@ -18,7 +18,8 @@ def caution_line(hazards: Sequence[Hazard]) -> str:
     if not hazards:
         return f"{UNKNOWN} {DEFER}"
     known = "; ".join(f"{h.hazard} ({h.detail})" if h.detail else h.hazard for h in hazards)
-    return f"Caution: {known}. More may apply. {DEFER}"
+    # Who has the last word stands first: a screen may have to cut the end off.
+    return f"Caution ({DEFER[0].lower()}{DEFER[1:-1]}; more may apply): {known}"
 
 
 def limits_line(liquid: Liquid) -> str:

@@ -146,7 +146,10 @@ class ShelfScreen(WorkScreen):
         width = self.size.width - 2
         hazards = self.session.shelf.hazards.get(liquid.id, ())
         lines = [_clipped(line, width) for line in like_summary(liquid, width)]
-        summary.update(Text("\n").join([*lines, Text(caution_line(hazards))]))
+        caution = caution_line(hazards)
+        if len(caution) > (room := 2 * width - 8):  # words wrap, so not every cell is used
+            caution = caution[: room - 1] + "…"
+        summary.update(Text("\n").join([*lines, Text(caution)]))
 
     def _shelf_row(self) -> int | None:
         source = self._source()
