@@ -60,10 +60,19 @@ def split_number(text: str, what: str, expected: str) -> tuple[float, str]:
     return float(match[1]), _ALIASES.get(unit, unit)
 
 
+def readable(unit: str) -> bool:
+    """Return whether Pint can be given a unit that somebody typed without hanging on it."""
+    return _UNREADABLE.search(_POWER.sub("@", _written_out(unit))) is None
+
+
+def _written_out(unit: str) -> str:
+    return re.sub("[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+", lambda m: "**" + m[0].translate(_RAISED), unit)
+
+
 def convert(number: float, unit: str, target: str) -> float | None:
     """Convert with Pint; None if the units are unknown or do not belong to the same dimension."""
-    plain = re.sub("[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+", lambda m: "**" + m[0].translate(_RAISED), unit)
-    if _UNREADABLE.search(_POWER.sub("@", plain)):
+    plain = _written_out(unit)
+    if not readable(unit):
         return None
     ureg = registry()
     try:

@@ -75,11 +75,13 @@ class Value:
         UnitMismatch
             If the unit is unknown or of another kind.
         """
-        from stillroom.chem.data.units import convert
+        from stillroom.chem.data.units import convert, readable
 
         q = self.definition
         if unit in (q.unit, q.unit_label):
             return Magnitude(self.number, unit)
+        if not readable(unit):
+            raise UnitMismatch(unit, self.quantity.replace("_", " "), q.unit_label or "a number")
         number = convert(self.number, q.unit or "dimensionless", unit)
         if number is not None:
             return Magnitude(number, unit)

@@ -2,17 +2,14 @@
 
 import math
 
-import numpy as np
 import pytest
 import scipy.constants as codata
-from hypothesis import assume, given
+from hypothesis import given
 from hypothesis import strategies as st
 
-from stillroom.chem import Value
 from stillroom.chem.data import constants
 from stillroom.chem.data.clean import clean_text
 from stillroom.chem.data.errors import BadNumber, OutsideRange, StillroomError, UnitMismatch
-from stillroom.chem.data.propagation import propagate
 from stillroom.chem.data.quantities import QUANTITIES, Quantity, quantity
 from stillroom.chem.data.units import parse_distance, parse_temperature, parse_value, registry
 
@@ -166,47 +163,3 @@ def test_impossible_distances(text: str) -> None:
 def test_distances_in_any_length() -> None:
     assert parse_distance("5 angstrom") == pytest.approx(parse_distance("0.5 nm"))
     assert parse_distance(5e-10) == pytest.approx(parse_distance("500 pm"))
-
-
-class TestValue:
-    """A number that carries its unit."""
-
-    value = Value("dipole", 2.88, "debye", "measured", "somewhere", 0.03)
-
-    def test_other_units(self) -> None:
-        assert self.value.to("debye") == pytest.approx(2.88)
-        assert self.value.to("coulomb*meter").magnitude == pytest.approx(9.6066e-30, rel=1e-4)
-        assert self.value.to("debye").units == "debye"
-        assert self.value.si_uncertainty == pytest.approx(0.03 * constants.DEBYE)
-
-    def test_a_unit_of_another_kind(self) -> None:
-        with pytest.raises(UnitMismatch):
-            self.value.to("kelvin")
-
-
-@given(st.text(max_size=200))
-def test_cleaned_text_is_one_printable_line(text: str) -> None:
-    cleaned = clean_text(text)
-    assert cleaned.isprintable()
-    assert cleaned == clean_text(cleaned)
-    assert not set(cleaned) & set("\x1b\x9b\u202e\x00\n\r")
-
-
-def test_propagation_of_a_product_and_a_power() -> None:
-    # u(f)/f = sqrt((u_x/x)^2 + (2 u_y/y)^2) for f = x y^2, by hand.
-    value, spread = propagate(lambda x, y: x * y**2, [3.0, 2.0], [0.03, 0.01])
-    assert value == pytest.approx(12.0)
-    assert spread == pytest.approx(12.0 * math.hypot(0.01, 0.01), rel=1e-4)
-
-
-@given(st.floats(0.1, 10), st.floats(0.1, 10), st.floats(0, 0.05), st.floats(0, 0.05))
-def test_propagation_of_a_sum(x: float, y: float, ux: float, uy: float) -> None:
-    assume(ux > 1e-9 or uy > 1e-9)
-    _, spread = propagate(lambda a, b: a - b, [x, y], [ux, uy])
-    assert spread == pytest.approx(math.hypot(ux, uy), rel=1e-6, abs=1e-12)
-
-
-def test_propagation_over_arrays() -> None:
-    value, spread = propagate(np.multiply, [np.array([1.0, 2.0]), 3.0], [np.array([0.1, 0.2]), 0])
-    assert value == pytest.approx([3.0, 6.0])
-    assert spread == pytest.approx([0.3, 0.6])
