@@ -7,6 +7,8 @@ import pytest
 from chemicals.identifiers import search_chemical
 from CoolProp import CoolProp
 
+from stillroom.chem.liquids.structure import valence_electrons
+
 FAMILIES = {
     "acid", "acyl halide", "alcohol", "aldehyde", "alkane", "alkene", "amide", "amine",
     "anhydride", "aromatic", "brominated", "carbonate", "chlorinated", "diol", "ester", "ether",
@@ -14,6 +16,16 @@ FAMILIES = {
     "nitrile", "nitro", "organosilicon", "phenol", "phosphorus", "pyridine", "sulfide/thiol",
     "sulfoxide/sulfone", "terpene",
 }  # fmt: skip
+
+TABLE_ERRORS = {"triethylsilane": "the table draws the triethylsilyl radical"}
+"""Liquids whose entry in the identifier table of `chemicals` 1.5.2 is wrong."""
+
+
+def test_every_liquid_has_a_closed_shell(liquids: pd.DataFrame) -> None:
+    """An even number of valence electrons (common practice: no stable liquid here is a radical)."""
+    counts = liquids.formula.map(valence_electrons)
+    assert counts.notna().all()
+    assert list(liquids.id[counts % 2 == 1]) == []
 
 
 def test_ids_are_the_names_in_lower_case_with_hyphens(liquids: pd.DataFrame) -> None:
@@ -51,7 +63,7 @@ def test_families_come_from_the_closed_list(liquids: pd.DataFrame) -> None:
 def test_structures_agree_with_the_identifier_table_by_cas_number(liquids: pd.DataFrame) -> None:
     """Skeletons (first InChIKey block) against the PubChem-derived table of `chemicals` 1.5.2."""
     wrong, checked = [], 0
-    for row in liquids.itertuples():
+    for row in liquids[~liquids.id.isin(TABLE_ERRORS)].itertuples():
         try:
             known = search_chemical(row.cas)
         except ValueError:
@@ -68,7 +80,7 @@ def test_molar_masses_agree_with_the_identifier_table(
 ) -> None:
     """Molar masses of PubChem in `chemicals` 1.5.2; heavy water is listed there as such."""
     wrong = []
-    for row in liquids.itertuples():
+    for row in liquids[~liquids.id.isin(TABLE_ERRORS)].itertuples():
         try:
             known = search_chemical(row.cas)
         except ValueError:
