@@ -5,7 +5,7 @@ from __future__ import annotations
 import re
 from dataclasses import dataclass
 
-_GROUP = re.compile(r"([A-Z][a-z]?)(\d*)")
+_GROUP = re.compile(r"([A-Z][a-z]?)([0-9]*)")
 
 VALENCE_ELECTRONS = {
     "H": 1, "D": 1, "B": 3, "Al": 3, "Ti": 4,
@@ -42,7 +42,7 @@ def valence_electrons(formula: str) -> float:
     >>> valence_electrons("C2H6O")
     20.0
     """
-    if not formula or not re.fullmatch(r"(?:[A-Z][a-z]?\d*)+", formula):
+    if not formula or not re.fullmatch(r"(?:[A-Z][a-z]?[0-9]*)+", formula):
         return float("nan")
     total = 0
     for element, count in _GROUP.findall(formula):

@@ -1,9 +1,13 @@
 """One liquid: handbook values of what follows from others, and the user's own liquids."""
 
+import copy
+import math
+import pickle
+
 import numpy as np
 import pytest
 
-from stillroom.chem import Liquid, Shelf, load_shelf
+from stillroom.chem import Liquid, Shelf, Value, load_shelf
 from stillroom.chem.data.errors import (
     BadNumber,
     MissingValue,
@@ -11,10 +15,7 @@ from stillroom.chem.data.errors import (
     UnitMismatch,
     UnknownQuantity,
 )
-from stillroom.chem.forces.contact import contact_diameter
-from stillroom.chem.liquids.refraction import lorentz_lorenz_polarizability
-from stillroom.chem.liquids.structure import valence_electrons
-from stillroom.chem.liquids.temperature import rackett_density_ratio, watson_ratio
+from stillroom.chem.data.quantities import QUANTITIES
 
 
 @pytest.fixture(scope="module")
@@ -69,80 +70,6 @@ def test_solubility_parameters(shelf: Shelf, name: str, delta: float) -> None:
     assert value.number == pytest.approx(delta, rel=0.03)
 
 
-def test_lorentz_lorenz_of_water_and_benzene() -> None:
-    # n_D and density at 20 degC: CRC Handbook. Water 1.45 to 1.47 A^3, benzene 10.3 to 10.4 A^3
-    # (from memory).
-    from stillroom.chem.data.constants import COULOMB
-
-    water = lorentz_lorenz_polarizability(1.3330, 18.048e-6) / COULOMB * 1e30
-    benzene = lorentz_lorenz_polarizability(1.5011, 88.87e-6) / COULOMB * 1e30
-    assert 1.45 <= water <= 1.48
-    assert 10.3 <= benzene <= 10.4
-
-
-@pytest.mark.parametrize(
-    ("formula", "count"), [("H2O", 8), ("C6H6", 30), ("CHCl3", 26), ("C2H6OS", 26), ("D2O", 8)]
-)
-def test_valence_electrons(formula: str, count: int) -> None:
-    assert valence_electrons(formula) == count
-
-
-@pytest.mark.parametrize("formula", ["", "Xx2", "C-6", "h2o"])
-def test_valence_electrons_of_no_formula(formula: str) -> None:
-    assert np.isnan(valence_electrons(formula))
-
-
-@pytest.mark.parametrize(
-    ("molar_volume_cm3", "peak_nm"),
-    [
-        # First centre-to-centre peak of the liquid by diffraction (from memory): benzene 0.575,
-        # carbon tetrachloride 0.59, acetonitrile 0.46 nm.
-        (89.4, 0.575),
-        (97.1, 0.59),
-        (52.9, 0.46),
-    ],
-)
-def test_contact_is_near_the_first_diffraction_peak(molar_volume_cm3, peak_nm) -> None:
-    assert contact_diameter(molar_volume_cm3 * 1e-6) * 1e9 == pytest.approx(peak_nm, rel=0.05)
-
-
-def test_water_is_the_known_exception_of_the_contact_rule() -> None:
-    # Oxygen-oxygen peak of liquid water: 0.28 nm (from memory).
-    assert contact_diameter(18.07e-6) * 1e9 > 1.1 * 0.28
-
-
-FLUIDS = {  # CoolProp's name, melting to boiling range used (K)
-    "Water": (280, 370), "Ethanol": (250, 350), "Methanol": (220, 335), "Acetone": (220, 325),
-    "Toluene": (220, 380), "n-Hexane": (200, 340), "Cyclohexane": (285, 350), "Benzene": (285, 350),
-    "n-Octane": (230, 395),
-}  # fmt: skip
-
-
-@pytest.mark.parametrize("fluid", FLUIDS)
-def test_rules_for_temperature_against_reference_equations(fluid: str) -> None:
-    """Rackett and Watson against CoolProp's equations of state, from 25 degC.
-
-    Water is the known exception of Rackett's rule (density maximum, hydrogen bonds): 4 %.
-    """
-    from CoolProp.CoolProp import PropsSI
-
-    critical = PropsSI("Tcrit", fluid)
-    at = np.linspace(*FLUIDS[fluid], 7)
-
-    def density(t):
-        return PropsSI("D", "T", t, "Q", 0, fluid)
-
-    def enthalpy(t):
-        return PropsSI("H", "T", t, "Q", 1, fluid) - PropsSI("H", "T", t, "Q", 0, fluid)
-
-    rackett = rackett_density_ratio(at, 298.15, critical) * density(298.15)
-    watson = watson_ratio(at, 298.15, critical) * enthalpy(298.15)
-    assert rackett == pytest.approx(
-        [density(t) for t in at], rel=0.04 if fluid == "Water" else 0.015
-    )
-    assert watson == pytest.approx([enthalpy(t) for t in at], rel=0.04)
-
-
 class TestOwnLiquid:
     """`Liquid(...)` with the user's own numbers."""
 
@@ -165,6 +92,63 @@ class TestOwnLiquid:
             Liquid("x", dipole="500 D")
         with pytest.raises(AttributeError):
             _ = Liquid("x").colour
+
+    @pytest.mark.parametrize("number", [math.nan, math.inf, -0.1, 15.1, "1e300 D", "-2 D"])
+    def test_an_unbelievable_number_is_told(self, number: float | str) -> None:
+        with pytest.raises(OutsideRange, match=r"dipole .* expected 0 to 15 D"):
+            Liquid("x", dipole=number)
+
+    def test_a_value_of_another_quantity_is_told(self) -> None:
+        with pytest.raises(UnitMismatch, match="'density' is not a dipole"):
+            Liquid("x", dipole=Value("density", 8.0, "kg/m**3", "user", "user", 0.0))
+        with pytest.raises(UnknownQuantity):
+            Liquid("x", dipol=Value("dipol", 8.0, "debye", "user", "user", 0.0))
+
+    @pytest.mark.parametrize(
+        ("name", "number", "unit", "spread", "own", "own_spread"),
+        [
+            # 1 D = 3.33564e-30 C m; a degree Fahrenheit is 5/9 of a kelvin.
+            ("dipole", 6.17e-30, "coulomb*meter", 1e-31, 1.8497, 0.02998),
+            ("flash_point", 68.0, "degF", 9.0, 20.0, 5.0),
+            ("density", 0.8, "g/mL", 0.001, 800.0, 1.0),
+            ("density", 800.0, "kg/m**3", math.nan, 800.0, math.nan),
+        ],
+    )
+    def test_a_value_in_another_unit_is_converted_with_its_uncertainty(
+        self, name, number, unit, spread, own, own_spread
+    ) -> None:
+        given = Value(name, number, unit, "measured", "paper", spread, 293.15, "note")
+        kept = Liquid("x", **{name: given}).need(name)
+        assert kept.number == pytest.approx(own, rel=1e-4)
+        assert kept.uncertainty == pytest.approx(own_spread, rel=1e-3, nan_ok=True)
+        assert kept.unit == QUANTITIES[name].unit
+        assert (kept.kind, kept.source, kept.note) == ("measured", "paper", "note")
+
+    def test_a_temperature_may_be_a_text_and_must_be_possible(self) -> None:
+        assert Liquid("x", temperature="25 degC").temperature == 298.15
+        with pytest.raises(OutsideRange, match="absolute zero"):
+            Liquid("x", temperature="-300 degC")
+
+    def test_texts_are_made_safe(self) -> None:
+        mine = Liquid("my\x1b[31m liquid", formula="CH4\n", family="ketone\u202e", smiles="C\x00")
+        who = mine.identity
+        assert (who.name, who.id) == ("my [31m liquid", "my-[31m-liquid")
+        assert (who.formula, who.family, who.smiles) == ("CH4", "ketone", "C")
+
+    def test_two_liquids_are_the_same_only_with_the_same_numbers(self, shelf: Shelf) -> None:
+        one, two = (Liquid("x", formula="CH4", dipole=d) for d in (1.0, 2.0))
+        assert one.same_as(Liquid("x", formula="CH4", dipole=1.0))
+        assert not one.same_as(two)
+        assert not one.same_as(Liquid("y", formula="CH4", dipole=1.0))
+        assert shelf["acetone"].same_as(shelf["propanone"].at(310))
+        assert not shelf["acetone"].same_as(shelf["water"])
+
+    def test_copies_are_whole(self, shelf: Shelf) -> None:
+        """Worker processes get liquids by pickling."""
+        acetone = shelf["acetone"]
+        for again in (copy.deepcopy(acetone), pickle.loads(pickle.dumps(acetone))):
+            assert again.values == acetone.values
+            assert again.identity == acetone.identity
 
     def test_a_missing_value_names_what_it_stops(self) -> None:
         with pytest.raises(MissingValue, match="x has no dipole; no orientation"):
