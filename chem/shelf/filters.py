@@ -242,7 +242,7 @@ class _Parser:
 
     def _text(self, name: str, operator: str, other: list[_Token]) -> Mask:
         wanted = " ".join(t.text for t in other).strip("\"'").casefold()
-        values = self.table.texts(name)
+        values = [[t for t in v if t] for v in self.table.texts(name)]  # a blank is a missing value
         if operator == "~":
             return np.array([any(wanted in t.casefold() for t in v) for v in values], dtype=bool)
         if operator not in ("=", "!="):
